@@ -1,0 +1,4 @@
+'use strict';
+
+/** @type {import('jest').Config} */
+module.exports = { ...require('./setup/jest-settings.cjs'), rootDir: __dirname, displayName: 'backend' };
