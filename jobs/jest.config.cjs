@@ -1,4 +1,8 @@
 'use strict';
 
 /** @type {import('jest').Config} */
-module.exports = { ...require('../backend/setup/jest-settings.cjs'), rootDir: __dirname, displayName: 'jobs' };
+module.exports = {
+  ...require('../backend/setup/jest-settings.cjs'),
+  rootDir: __dirname,
+  displayName: 'jobs',
+};
