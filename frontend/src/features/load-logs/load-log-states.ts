@@ -1,0 +1,50 @@
+import type { LoadLogState } from '@stayledger/shared/contracts/load-logs';
+
+interface StateWords {
+  /** The word in tables. */
+  word: string;
+  /** What it means and what comes next, one sentence. */
+  meaning: string;
+  /** True while the server works on it without anybody's help: worth asking again each second. */
+  moving: boolean;
+}
+
+const WORDS: Record<LoadLogState, StateWords> = {
+  receiving: {
+    word: 'Upload not finished',
+    meaning:
+      'The file is not here yet. The upload goes on where it stopped when the same file is chosen again.',
+    moving: true,
+  },
+  received: {
+    word: 'Waiting to be counted',
+    meaning: 'The file is here. Counting begins by itself.',
+    moving: true,
+  },
+  counting: {
+    word: 'Being counted',
+    meaning: 'Cycles are being counted. You may leave this page.',
+    moving: true,
+  },
+  counted: {
+    word: 'Waiting for review',
+    meaning: 'Counted. Nothing reaches the ledger until a person posts it.',
+    moving: false,
+  },
+  posted: {
+    word: 'Posted to the ledger',
+    meaning: 'Its cycles stand in the accounts of the parts.',
+    moving: false,
+  },
+  'set-aside': { word: 'Set aside', meaning: 'Kept, but it counts towards no part.', moving: false },
+  failed: {
+    word: 'Could not be read',
+    meaning: 'Nothing was counted. What is wrong stands below.',
+    moving: false,
+  },
+};
+
+/** How a load log's state reads to people. */
+export function loadLogStateWords(state: LoadLogState): StateWords {
+  return WORDS[state];
+}
