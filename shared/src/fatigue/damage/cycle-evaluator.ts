@@ -2,7 +2,7 @@ import type { Curve, CurveMeanLoad } from '../curves/curve.js';
 import { cyclesToFailure } from '../curves/cycles-to-failure.js';
 import type { DetailModel } from './detail-model.js';
 import { endBendingRangeMpa } from './end-bending-range.js';
-import { rangeAtZeroMean } from './mean-load.js';
+import { rangeAtReference } from './mean-load.js';
 import { workingCurve } from './working-curve.js';
 
 /** Damage of single cycles on one detail, with everything that does not change from cycle to cycle worked out once. */
@@ -10,10 +10,12 @@ export class CycleEvaluator {
   private readonly curve: Curve;
   private readonly meanLoad: CurveMeanLoad | null;
   private readonly axialFactor: number;
+  private readonly referenceR: number;
 
   constructor(private readonly detail: DetailModel) {
     this.curve = workingCurve(detail);
     this.meanLoad = 'meanLoad' in detail.curve ? detail.curve.meanLoad : null;
+    this.referenceR = this.meanLoad?.kind === 'rule-allowed' ? this.meanLoad.referenceR : -1;
     this.axialFactor = detail.factor * detail.stressConcentration;
   }
 
@@ -33,7 +35,8 @@ export class CycleEvaluator {
 
   /**
    * Range taken to the curve by a cycle between two loads (kN): axial range with its stress concentration, plus
-   * bending at a fixed end, times the size factor, moved to zero mean where the detail has a mean rule.
+   * bending at a fixed end, times the size factor, moved to the stress ratio of the curve's tests where the
+   * detail has a mean rule.
    */
   rangeOf(lowKn: number, highKn: number): number {
     const { factor, endBending, sizeFactor, mean } = this.detail;

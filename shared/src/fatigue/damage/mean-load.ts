@@ -130,3 +130,37 @@ export function rangeAtZeroMean(range: number, mean: number, rule: MeanLoadRule)
       return 2 * walkerAmplitude(range / 2, mean, rule.gamma);
   }
 }
+
+/**
+ * Range at the stress ratio of a curve's tests that does the damage of `range` at `mean`, by the given rule: first
+ * moved to R = -1 ({@link rangeAtZeroMean}), then along the same rule to R.
+ *
+ * @param range full range in the measure of the curve
+ * @param mean mean in the same measure
+ * @param referenceR R = lowest / highest of the curve's tests, below 1; -1 for fully reversed
+ * @throws MeanAboveUltimateError as {@link rangeAtZeroMean}
+ * @throws RangeError for R >= 1
+ */
+export function rangeAtReference(
+  range: number,
+  mean: number,
+  rule: MeanLoadRule,
+  referenceR: number,
+): number {
+  if (!(referenceR < 1)) throw new RangeError(`The stress ratio R must be below 1, not ${referenceR}.`);
+  const reversed = rangeAtZeroMean(range, mean, rule) / 2;
+  switch (rule.kind) {
+    case 'none':
+      return range;
+    case 'goodman':
+      return 2 * amplitudeAtStressRatio(reversed, rule.ultimate, referenceR);
+    case 'gerber': {
+      // amplitude = reversed * (1 - (meanOverAmplitude * amplitude / ultimate)^2), solved for the amplitude.
+      const meanOverAmplitude = (1 + referenceR) / (1 - referenceR);
+      const ratio = (reversed * meanOverAmplitude) / rule.ultimate;
+      return (4 * reversed) / (1 + Math.sqrt(1 + 4 * ratio ** 2));
+    }
+    case 'walker':
+      return 2 * reversed * ((1 - referenceR) / 2) ** (1 - rule.gamma);
+  }
+}
