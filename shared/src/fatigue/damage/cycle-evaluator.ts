@@ -42,9 +42,8 @@ export class CycleEvaluator {
     const { factor, endBending, sizeFactor, mean } = this.detail;
     const bending = endBending === null ? 0 : endBendingRangeMpa(factor * lowKn, factor * highKn, endBending);
     const range = ((highKn - lowKn) * this.axialFactor + bending) * sizeFactor;
-    return mean.kind === 'none'
-      ? range
-      : rangeAtZeroMean(range, (this.axialFactor * (lowKn + highKn)) / 2, mean);
+    if (mean.kind === 'none') return range;
+    return rangeAtReference(range, (this.axialFactor * (lowKn + highKn)) / 2, mean, this.referenceR);
   }
 
   /** Damage of one cycle of this range (see {@link rangeOf}); the loads matter only for curves with a mean-load term. */
