@@ -15,8 +15,9 @@ const VESSEL_TABLES = [
 ] as const;
 
 /**
- * The first schema. Two roles: the owner runs this, the application (`stayledger_app`) owns nothing and sees
- * vessel data only through the policies at the end. Without the setting `app.parties` it sees no row.
+ * The first schema. Two roles: the owner runs this, the application (`stayledger_app`) owns nothing. Both see vessel
+ * data only through the policies at the end (row level security is forced, so the owner's seeds are bound as well).
+ * Without the setting `app.parties` nobody sees a row.
  */
 export class Migration20261201120000_first extends Migration {
   override up(): void {
@@ -397,13 +398,14 @@ export class Migration20261201120000_first extends Migration {
         part_standing, job, log_channel, load_spectrum to stayledger_app;
       grant select on curve, construction to stayledger_app;
       grant select, insert on ledger_entry, audit_event to stayledger_app;
+      grant select on schema_migration to stayledger_app;
     `);
 
     for (const table of VESSEL_TABLES) {
       this.addSql(`
         alter table ${table} enable row level security;
         alter table ${table} force row level security;
-        create policy ${table}_reach on ${table} to stayledger_app
+        create policy ${table}_reach on ${table}
           using (vessel_id in (select reachable_vessels()))
           with check (vessel_id in (select reachable_vessels()));
       `);
@@ -411,25 +413,25 @@ export class Migration20261201120000_first extends Migration {
     this.addSql(`
       alter table vessel enable row level security;
       alter table vessel force row level security;
-      create policy vessel_reach on vessel to stayledger_app
+      create policy vessel_reach on vessel
         using (id in (select reachable_vessels())) with check (id in (select reachable_vessels()));
 
       alter table vessel_access enable row level security;
       alter table vessel_access force row level security;
-      create policy vessel_access_reach on vessel_access to stayledger_app
+      create policy vessel_access_reach on vessel_access
         using (vessel_id in (select reachable_vessels())) with check (vessel_id in (select reachable_vessels()));
       -- reachable_vessels() runs as the owner and must read this table without asking itself.
       create policy vessel_access_owner on vessel_access to current_user using (true) with check (true);
 
       alter table audit_event enable row level security;
       alter table audit_event force row level security;
-      create policy audit_event_reach on audit_event to stayledger_app
+      create policy audit_event_reach on audit_event
         using (vessel_id is null or vessel_id in (select reachable_vessels()))
         with check (vessel_id is null or vessel_id in (select reachable_vessels()));
 
       alter table idempotency_key enable row level security;
       alter table idempotency_key force row level security;
-      create policy idempotency_key_own on idempotency_key to stayledger_app
+      create policy idempotency_key_own on idempotency_key
         using (user_id::text = current_setting('app.user_id', true))
         with check (user_id::text = current_setting('app.user_id', true));
     `);

@@ -1,0 +1,34 @@
+import { AuditEvent } from '../audit/audit-event.entity.js';
+import { SessionRow } from '../auth/session-row.entity.js';
+import { SignInAttempt } from '../auth/sign-in-attempt.entity.js';
+import { IdempotencyKey } from '../common/idempotency/idempotency-key.entity.js';
+import { Construction } from '../constructions/construction.entity.js';
+import { Curve } from '../curves/curve.entity.js';
+import { Firm } from '../firms/firm.entity.js';
+import { Membership } from '../firms/membership.entity.js';
+import { Job } from '../jobs/job.entity.js';
+import { FittedPart } from '../parts/fitted-part.entity.js';
+import { Position } from '../rig/position.entity.js';
+import { User } from '../users/user.entity.js';
+import { VesselAccess } from '../vessels/vessel-access.entity.js';
+import { Vessel } from '../vessels/vessel.entity.js';
+import { ServiceSetting } from './service-setting.entity.js';
+
+/** Every table of the service. `npm run db:check` compares this list with the migrated schema. */
+export const ENTITIES = [
+  AuditEvent,
+  Construction,
+  Curve,
+  Firm,
+  FittedPart,
+  IdempotencyKey,
+  Job,
+  Membership,
+  Position,
+  ServiceSetting,
+  SessionRow,
+  SignInAttempt,
+  User,
+  Vessel,
+  VesselAccess,
+];

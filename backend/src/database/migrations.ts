@@ -1,0 +1,4 @@
+import { Migration20261201120000_first } from './migrations/Migration20261201120000_first.js';
+
+/** All migrations in order. Named here instead of found by a file pattern, so source and build cannot be mixed up. */
+export const MIGRATIONS = [{ name: 'Migration20261201120000_first', class: Migration20261201120000_first }];
