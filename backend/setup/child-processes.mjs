@@ -11,6 +11,13 @@ export function asAccount(account) {
   return account ? ['setpriv', `--reuid=${account}`, `--regid=${account}`, '--clear-groups'] : [];
 }
 
+const runningCommands = new Set();
+
+/** Ends the commands that `run` is waiting for: a stop in the middle of a step must not wait for its end. */
+export function endRunningCommands() {
+  for (const child of runningCommands) child.kill('SIGTERM');
+}
+
 /**
  * Runs a command to its end and collects what it said.
  * Resolves with `{ code, signal, stdout, stderr }`; a program that cannot be started gives code 127.
@@ -23,6 +30,7 @@ export function run(command, { account, env, cwd, input, onOutput } = {}) {
       env: env ?? process.env,
       stdio: [input === undefined ? 'ignore' : 'pipe', 'pipe', 'pipe'],
     });
+    runningCommands.add(child);
     let stdout = '';
     let stderr = '';
     child.stdout.on('data', (chunk) => {
@@ -34,10 +42,12 @@ export function run(command, { account, env, cwd, input, onOutput } = {}) {
       onOutput?.(String(chunk));
     });
     if (input !== undefined) child.stdin.end(input);
-    child.on('error', (error) =>
-      resolve({ code: 127, signal: null, stdout, stderr: stderr + error.message }),
-    );
-    child.on('close', (code, signal) => resolve({ code: code ?? 1, signal, stdout, stderr }));
+    const finish = (outcome) => {
+      runningCommands.delete(child);
+      resolve(outcome);
+    };
+    child.on('error', (error) => finish({ code: 127, signal: null, stdout, stderr: stderr + error.message }));
+    child.on('close', (code, signal) => finish({ code: code ?? 1, signal, stdout, stderr }));
   });
 }
 
