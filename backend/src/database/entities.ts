@@ -7,6 +7,14 @@ import { Curve } from '../curves/curve.entity.js';
 import { Firm } from '../firms/firm.entity.js';
 import { Membership } from '../firms/membership.entity.js';
 import { Job } from '../jobs/job.entity.js';
+import { LedgerEntry } from '../ledger/ledger-entry.entity.js';
+import { PartDetail } from '../life/part-detail.entity.js';
+import { PartStanding } from '../life/part-standing.entity.js';
+import { UsagePlan } from '../life/usage-plan.entity.js';
+import { ChannelMapping } from '../load-logs/channel-mapping.entity.js';
+import { LoadLog } from '../load-logs/load-log.entity.js';
+import { StoredSpectrum } from '../load-logs/load-spectrum.entity.js';
+import { LogChannel } from '../load-logs/log-channel.entity.js';
 import { FittedPart } from '../parts/fitted-part.entity.js';
 import { Position } from '../rig/position.entity.js';
 import { User } from '../users/user.entity.js';
@@ -17,17 +25,25 @@ import { ServiceSetting } from './service-setting.entity.js';
 /** Every table of the service. `npm run db:check` compares this list with the migrated schema. */
 export const ENTITIES = [
   AuditEvent,
+  ChannelMapping,
   Construction,
   Curve,
   Firm,
   FittedPart,
   IdempotencyKey,
   Job,
+  LedgerEntry,
+  LoadLog,
+  LogChannel,
   Membership,
+  PartDetail,
+  PartStanding,
   Position,
   ServiceSetting,
   SessionRow,
   SignInAttempt,
+  StoredSpectrum,
+  UsagePlan,
   User,
   Vessel,
   VesselAccess,
