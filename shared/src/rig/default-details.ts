@@ -177,7 +177,6 @@ function terminalCurve(
       return 'A cold-formed head belongs on rod; say how this end is made.';
     case 'ferrule-eye':
     case 'spliced-eye':
-    case 'wire-grips':
       return 'No usable fatigue curve exists for this kind of terminal.';
   }
 }

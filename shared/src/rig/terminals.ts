@@ -2,14 +2,7 @@ import type { Provenance } from '../fatigue/curves/curve.js';
 
 /** How the end of a stay is made off. */
 export type TerminalKind =
-  | 'swaged'
-  | 'mechanical'
-  | 'poured-socket'
-  | 'ferrule-eye'
-  | 'cold-head'
-  | 'spliced-eye'
-  | 'wire-grips'
-  | 'unknown';
+  'swaged' | 'mechanical' | 'poured-socket' | 'ferrule-eye' | 'cold-head' | 'spliced-eye' | 'unknown';
 
 /** A kind of terminal of the reference data. */
 export interface Terminal {

@@ -28,7 +28,7 @@ export type CurveLevel = 'mean' | 'mean-minus-k-sd' | 'fractile-95-75' | 'unknow
 
 /** Surroundings in which a curve holds. */
 export type CurveEnvironment =
-  'air' | 'protected-in-sea-air' | 'seawater-cathodic-protection' | 'seawater-free-corrosion';
+  'air' | 'corrosion-protected' | 'seawater-cathodic-protection' | 'seawater-free-corrosion';
 
 /** How sure we are of the numbers of a curve or table. */
 export type Provenance = 'published' | 'published, secondary' | 'from memory' | 'estimate' | 'derived';
