@@ -26,7 +26,7 @@ export type EntryKind = (typeof ENTRY_KINDS)[number];
 @Index({
   name: 'ledger_entry_recorded_once',
   expression:
-    "create unique index ledger_entry_recorded_once on ledger_entry (part_detail_id, load_log_id) where kind = 'recorded'",
+    "create unique index ledger_entry_recorded_once on ledger_entry (part_detail_id, load_log_id, (basis ->> 'edition')) where kind = 'recorded'",
 })
 @Index({
   name: 'ledger_entry_reversed_once',

@@ -336,7 +336,7 @@ export class Migration20261201120000_first extends Migration {
         foreign key (curve_id, curve_version) references curve (id, version)
       );
       create unique index ledger_entry_sequence on ledger_entry (part_detail_id, sequence);
-      create unique index ledger_entry_recorded_once on ledger_entry (part_detail_id, load_log_id)
+      create unique index ledger_entry_recorded_once on ledger_entry (part_detail_id, load_log_id, (basis ->> 'edition'))
         where kind = 'recorded';
       create unique index ledger_entry_reversed_once on ledger_entry (reverses_id) where reverses_id is not null;
       create index ledger_entry_vessel on ledger_entry (vessel_id);
