@@ -15,14 +15,19 @@ const runningCommands = new Set();
 
 /** Ends the commands that `run` is waiting for: a stop in the middle of a step must not wait for its end. */
 export function endRunningCommands() {
-  for (const child of runningCommands) child.kill('SIGTERM');
+  for (const child of runningCommands) {
+    child.kill('SIGTERM');
+    // npm goes on installing after a TERM. What it leaves behind is redone by the next start.
+    setTimeout(() => child.kill('SIGKILL'), 3_000).unref();
+  }
 }
 
 /**
  * Runs a command to its end and collects what it said.
  * Resolves with `{ code, signal, stdout, stderr }`; a program that cannot be started gives code 127.
+ * `uncuttable` protects a command that must not be ended half-way.
  */
-export function run(command, { account, env, cwd, input, onOutput } = {}) {
+export function run(command, { account, env, cwd, input, onOutput, uncuttable = false } = {}) {
   const [program, ...args] = [...asAccount(account), ...command];
   return new Promise((resolve) => {
     const child = spawn(program, args, {
@@ -30,7 +35,7 @@ export function run(command, { account, env, cwd, input, onOutput } = {}) {
       env: env ?? process.env,
       stdio: [input === undefined ? 'ignore' : 'pipe', 'pipe', 'pipe'],
     });
-    runningCommands.add(child);
+    if (!uncuttable) runningCommands.add(child);
     let stdout = '';
     let stderr = '';
     child.stdout.on('data', (chunk) => {

@@ -1,7 +1,7 @@
 import * as fs from 'node:fs';
 import * as os from 'node:os';
 import * as path from 'node:path';
-import { createThrowAwayCluster, withConnection } from './postgres-cluster.mjs';
+import { createThrowAwayCluster, makeTemporaryFolder, withConnection } from './postgres-cluster.mjs';
 import { Problem } from './problem.mjs';
 
 /**
@@ -52,7 +52,7 @@ async function main() {
   }
   if (running) return note.adminUrl;
   forget(note);
-  const folder = fs.mkdtempSync(path.join(os.tmpdir(), 'stayledger-dev-'));
+  const folder = await makeTemporaryFolder('stayledger-dev-');
   const { adminUrl, pid } = await createThrowAwayCluster(folder, { outlive: true });
   const draft = path.join(folder, 'note.json');
   fs.writeFileSync(draft, JSON.stringify({ adminUrl, folder, pid }, null, 2), { mode: 0o600 });

@@ -1,7 +1,7 @@
 import { randomBytes } from 'node:crypto';
 import * as fs from 'node:fs';
 import * as path from 'node:path';
-import { userInfo } from 'node:os';
+import { tmpdir, userInfo } from 'node:os';
 import { endProcess, isAlive, pause, run, spawnLasting } from './child-processes.mjs';
 import { anyFreePort } from './ports.mjs';
 import { Problem } from './problem.mjs';
@@ -241,6 +241,19 @@ export async function withConnection(url, work) {
   } finally {
     await client.end();
   }
+}
+
+/**
+ * A new temporary folder that the server's account can enter. A root whose TMPDIR is closed to others (some systems
+ * give each user one) needs the common one.
+ */
+export async function makeTemporaryFolder(prefix) {
+  const account = serverAccount();
+  for (const parent of [tmpdir(), '/tmp', '/var/tmp']) {
+    const { code } = await run(['test', '-x', parent], { account, cwd: '/' });
+    if (code === 0) return fs.mkdtempSync(path.join(parent, prefix));
+  }
+  throw new Problem(`The account ${account} can enter no temporary folder (${tmpdir()}, /tmp, /var/tmp).`);
 }
 
 /** A fresh throw-away cluster in `folder`, with both roles made. Their password is the administrator's. */

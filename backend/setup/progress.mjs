@@ -1,6 +1,8 @@
 /** Prints the steps of a set-up script: what is going on, a sign of life in long ones, and how long each took. */
 
 const SIGN_OF_LIFE_MS = 10_000;
+// A step that is over at once needs no announcement.
+const ANNOUNCE_AFTER_MS = 300;
 
 function seconds(sinceMs) {
   const s = (performance.now() - sinceMs) / 1000;
@@ -20,7 +22,7 @@ export function createProgress(total, write = (line) => process.stdout.write(`${
       const label = `[${count}/${total}] ${title}`;
       const begun = performance.now();
       let note = '';
-      write(`${label} …`);
+      const announcement = setTimeout(() => write(`${label} …`), ANNOUNCE_AFTER_MS);
       const alive = setInterval(
         () => write(`${label} … ${seconds(begun)}${note ? `, ${note}` : ''}`),
         SIGN_OF_LIFE_MS,
@@ -37,6 +39,7 @@ export function createProgress(total, write = (line) => process.stdout.write(`${
         });
         write(`${label}: ${outcome === null ? 'nothing to do' : outcome || 'done'} (${seconds(begun)})`);
       } finally {
+        clearTimeout(announcement);
         clearInterval(alive);
       }
     },

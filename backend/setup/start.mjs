@@ -99,7 +99,7 @@ async function runOwnerCommand(file, args, { database, folder, demo }, note) {
 }
 
 /** Starts API, web application and jobs in one process and waits until it says that it listens. */
-async function startServer({ database, folder, secrets, demo, host, port }) {
+async function startServer({ database, folder, secrets, demo, host, port, lock }) {
   const env = {
     ...settings,
     NODE_ENV: 'production',
@@ -119,6 +119,7 @@ async function startServer({ database, folder, secrets, demo, host, port }) {
     stdio: ['ignore', 'pipe', 'pipe'],
     deathSignal: 'TERM',
   });
+  if (server.child.pid) lock.add(server.child.pid);
   started.push({
     stop: () => endProcess(server, 'SIGTERM', SERVER_GRACE_MS),
     hurry: () => server.child.kill('SIGKILL'),
@@ -149,15 +150,16 @@ async function startServer({ database, folder, secrets, demo, host, port }) {
   return { server, address };
 }
 
-/** The demo's sign-ins, written by the seed. */
-function demoSignIns(folder) {
-  const file = path.join(folder, 'demo-sign-ins.json');
-  return fs.existsSync(file) ? JSON.parse(fs.readFileSync(file, 'utf8')) : [];
+/** The demo's sign-ins, as the server offers them on its sign-in page. */
+async function demoSignIns(address) {
+  const reply = await fetch(`${address}/api/auth/demo-sign-ins`, { signal: AbortSignal.timeout(10_000) });
+  if (!reply.ok) throw new Problem(`The server answered ${reply.status} when asked for the demo's sign-ins.`);
+  return (await reply.json()).items;
 }
 
-function printWelcome({ address, folder, demo }) {
+async function printWelcome({ address, demo }) {
   const lines = ['', `Stayledger is ready:  ${settings.PUBLIC_URL || address}`];
-  const signIns = demo ? demoSignIns(folder) : [];
+  const signIns = demo ? await demoSignIns(address) : [];
   if (signIns.length > 0) {
     lines.push('', 'Demo sign-ins (this machine only):');
     const widest = Math.max(...signIns.map(({ role }) => role.length));
@@ -195,12 +197,6 @@ async function main() {
 
   // Its sign-ins are published on the screen, so the demo exists only where nobody else can reach it.
   const demo = ownCluster && isLoopback(host) && settings.STAYLEDGER_DEMO !== '0';
-  if (!isLoopback(host) && demoSignIns(folder).length > 0) {
-    throw new Problem(
-      `The data folder holds the demo, whose passwords are no secret, and HOST=${host} can be reached by others.`,
-      'Use another STAYLEDGER_DATA, or leave HOST at 127.0.0.1.',
-    );
-  }
 
   let database;
   await step('Database', async () => {
@@ -234,11 +230,10 @@ async function main() {
   let running;
   await step('Server', async () => {
     const port = await freePortFrom(wantedPort, host);
-    running = await startServer({ ...context, port });
-    lock.add(running.server.child.pid);
+    running = await startServer({ ...context, port, lock });
     return port === wantedPort ? '' : `port ${wantedPort} is in use, took ${port}`;
   });
-  printWelcome({ address: running.address, folder, demo });
+  await printWelcome({ address: running.address, demo });
 
   const ending = await Promise.race([
     stopAsked,

@@ -71,7 +71,7 @@ export async function ensureSystemPackages(names, note = () => {}) {
   // Another apt may be at work on a fresh machine (unattended upgrades): wait for it rather than fail.
   const apt = ['apt-get', '-o', 'DPkg::Lock::Timeout=300'];
   for (const args of [['update'], ['install', '--yes', '--no-install-recommends', ...packages]]) {
-    const { code, stdout, stderr } = await run([...apt, ...args], { env, onOutput: note });
+    const { code, stdout, stderr } = await run([...apt, ...args], { env, onOutput: note, uncuttable: true });
     if (code !== 0) {
       const tail = (stderr.trim() || stdout.trim()).split('\n').slice(-6);
       throw new Problem(`apt-get ${args[0]} failed:`, ...tail.map((line) => `  ${line}`));

@@ -8,8 +8,6 @@ import { ormOptions } from '../database/mikro-orm.config.js';
 
 const OWNER = 'stayledger_owner';
 const APP = 'stayledger_app';
-/** Both roles exist only on a throw-away cluster on loopback. */
-const PASSWORD = 'for-tests-only';
 /** Any number, the same in every worker: one of them makes the template while the others wait. */
 const TEMPLATE_LOCK = 7_302_031;
 
@@ -33,12 +31,17 @@ function adminUrl(): string {
   );
 }
 
+/** On a throw-away cluster both roles carry the administrator's password; the browser tests count on it too. */
+function rolePassword(): string {
+  return decodeURIComponent(new URL(adminUrl()).password);
+}
+
 function urlOf(database: string, role?: string): string {
   const url = new URL(adminUrl());
   url.pathname = `/${database}`;
   if (role) {
     url.username = role;
-    url.password = PASSWORD;
+    url.password = rolePassword();
   }
   return url.href;
 }
@@ -55,7 +58,9 @@ function templateName(): string {
 async function ensureRole(client: Client, role: string): Promise<void> {
   const { rowCount } = await client.query('select 1 from pg_roles where rolname = $1', [role]);
   const verb = rowCount ? 'alter' : 'create';
-  await client.query(`${verb} role ${role} login nosuperuser password '${PASSWORD}'`);
+  await client.query(
+    `${verb} role ${role} login nosuperuser password ${client.escapeLiteral(rolePassword())}`,
+  );
 }
 
 async function ensureTemplate(client: Client, template: string): Promise<void> {
