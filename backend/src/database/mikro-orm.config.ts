@@ -33,6 +33,10 @@ export function ormOptions(url: string, options: { poolMax?: number } = {}): Opt
     // Nest's logger says what matters; the ORM's own lines would bypass it.
     debug: false,
     pool: { min: 0, max: options.poolMax ?? 10 },
-    driverOptions: { connection: { application_name: 'stayledger' } },
+    driverOptions: {
+      // A database that is away should be said within seconds, not after knex's minute.
+      acquireConnectionTimeout: 5_000,
+      connection: { application_name: 'stayledger' },
+    },
   });
 }

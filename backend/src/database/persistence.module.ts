@@ -4,6 +4,7 @@ import { PostgreSqlDriver } from '@mikro-orm/postgresql';
 import type { Env } from '../config/env.js';
 import { ENV } from '../config/config.module.js';
 import { ormOptions } from './mikro-orm.config.js';
+import { SchemaIsCurrent } from './schema-is-current.js';
 
 /**
  * The one ORM of a process. API and worker import this class; calling `forRoot` in both would give two ORMs as soon
@@ -17,6 +18,6 @@ import { ormOptions } from './mikro-orm.config.js';
       useFactory: (env: Env) => ormOptions(env.DATABASE_APP_URL),
     }),
   ],
-  exports: [MikroOrmModule],
+  providers: [SchemaIsCurrent],
 })
 export class PersistenceModule {}

@@ -1,0 +1,38 @@
+import { Module } from '@nestjs/common';
+import { APP_FILTER, APP_GUARD, APP_INTERCEPTOR, APP_PIPE } from '@nestjs/core';
+import { ScheduleModule } from '@nestjs/schedule';
+import { ThrottlerGuard } from '@nestjs/throttler';
+import { ZodSerializerInterceptor, ZodValidationPipe } from 'nestjs-zod';
+import { AccessGuard } from './auth/access.guard.js';
+import { AuthModule } from './auth/auth.module.js';
+import { ClockModule } from './common/clock/clock.module.js';
+import { ErrorFilter } from './common/errors/error.filter.js';
+import { ThrottlingModule } from './common/http/throttling.js';
+import { IdempotencyInterceptor } from './common/idempotency/idempotency.interceptor.js';
+import { ConfigModule } from './config/config.module.js';
+import { PersistenceModule } from './database/persistence.module.js';
+import { ReachInterceptor } from './database/reach.interceptor.js';
+import { HealthModule } from './health/health.module.js';
+
+/** The API. What stands around every route, from the outside in, then the features. */
+@Module({
+  imports: [
+    ConfigModule,
+    ClockModule,
+    PersistenceModule,
+    ThrottlingModule,
+    ScheduleModule.forRoot(),
+    AuthModule,
+    HealthModule,
+  ],
+  providers: [
+    { provide: APP_FILTER, useClass: ErrorFilter },
+    { provide: APP_GUARD, useClass: ThrottlerGuard },
+    { provide: APP_GUARD, useClass: AccessGuard },
+    { provide: APP_INTERCEPTOR, useClass: ReachInterceptor },
+    { provide: APP_INTERCEPTOR, useClass: IdempotencyInterceptor },
+    { provide: APP_INTERCEPTOR, useClass: ZodSerializerInterceptor },
+    { provide: APP_PIPE, useClass: ZodValidationPipe },
+  ],
+})
+export class AppModule {}
