@@ -25,7 +25,10 @@ export function ormOptions(url: string, options: { poolMax?: number } = {}): Opt
     migrations: {
       migrationsList: MIGRATIONS,
       tableName: MIGRATION_TABLE,
+      // Migrations are written by hand and compared with a live database (`npm run db:check`); a snapshot file would
+      // be rewritten by every start.
       snapshotName: '.snapshot-stayledger',
+      snapshot: false,
       path: join(__dirname, 'migrations'),
       emit: 'ts',
       silent: true,

@@ -13,6 +13,11 @@ import { Vessel } from '../vessels/vessel.entity.js';
 
 /** A place on the rig. What is fitted there changes; the place stays. */
 @Entity({ tableName: 'position' })
+@Index({
+  name: 'position_label_unique',
+  expression:
+    'create unique index position_label_unique on position (vessel_id, label) where archived_at is null',
+})
 export class Position extends EditableRow {
   @Index({ name: 'position_vessel' })
   @References(() => Vessel)

@@ -3,8 +3,10 @@ import { readFileSync } from 'node:fs';
 import { join } from 'node:path';
 import { MikroORM } from '@mikro-orm/postgresql';
 import { Client, Pool } from 'pg';
+import { Clock } from '../common/clock/clock.js';
 import { MIGRATIONS } from '../database/migrations.js';
 import { ormOptions } from '../database/mikro-orm.config.js';
+import { REFERENCE_FILES, seedReferenceData } from '../database/seed/reference-data.js';
 
 const OWNER = 'stayledger_owner';
 const APP = 'stayledger_app';
@@ -46,12 +48,13 @@ function urlOf(database: string, role?: string): string {
   return url.href;
 }
 
-/** Named by what is in it, so a changed migration gets a new template and an unchanged one is used again. */
+/** Named by what is in it, so a changed migration or curve gets a new template and an unchanged one is used again. */
 function templateName(): string {
   const hash = createHash('sha256');
   for (const migration of MIGRATIONS) {
     hash.update(readFileSync(join(__dirname, '../database/migrations', `${migration.name}.ts`)));
   }
+  for (const path of Object.values(REFERENCE_FILES)) hash.update(readFileSync(path));
   return `stayledger_template_${hash.digest('hex').slice(0, 12)}`;
 }
 
@@ -76,6 +79,7 @@ async function ensureTemplate(client: Client, template: string): Promise<void> {
     const orm = await MikroORM.init(ormOptions(urlOf(template, OWNER)));
     try {
       await orm.getMigrator().up();
+      await seedReferenceData(orm.em.fork(), new Clock().now());
     } finally {
       await orm.close(true);
     }

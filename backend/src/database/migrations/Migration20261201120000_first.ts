@@ -156,6 +156,7 @@ export class Migration20261201120000_first extends Migration {
         version int not null default 1
       );
       create index position_vessel on position (vessel_id);
+      create unique index position_label_unique on position (vessel_id, label) where archived_at is null;
 
       create table fitted_part (
         id uuid primary key,
