@@ -1,0 +1,27 @@
+import App from 'antd/es/app';
+import ConfigProvider from 'antd/es/config-provider';
+import { Outlet } from 'react-router-dom';
+import { antdTheme } from '../theme/antd-theme';
+import { useColourMode, useIsPhone } from '../theme/colour-mode';
+
+/**
+ * Layout of the routes that use antd. It is loaded with the first of them, so that the shell, the sign-in page and the
+ * owner's page stay light on a phone.
+ */
+export function AntdScope() {
+  const { mode } = useColourMode();
+  const phone = useIsPhone();
+  return (
+    <ConfigProvider theme={antdTheme(mode, phone)} csp={{ nonce: pageNonce() }}>
+      <App component={false}>
+        <Outlet />
+      </App>
+    </ConfigProvider>
+  );
+}
+
+/** The nonce the server wrote into this page; style elements without it are refused. */
+function pageNonce(): string | undefined {
+  const nonce = document.querySelector<HTMLMetaElement>('meta[property="csp-nonce"]')?.nonce;
+  return nonce && !nonce.startsWith('__') ? nonce : undefined;
+}

@@ -1,0 +1,48 @@
+/** Each page's address once: `pattern` for the router, `to` for links. */
+function page<Arguments extends unknown[]>(pattern: string, to: (...given: Arguments) => string) {
+  return { pattern, to };
+}
+const fixed = (pattern: string) => page(pattern, () => pattern);
+
+export const paths = {
+  home: fixed('/'),
+  signIn: page('/sign-in', (from?: string) =>
+    from ? `/sign-in?from=${encodeURIComponent(from)}` : '/sign-in',
+  ),
+  fleet: fixed('/fleet'),
+  myVessel: fixed('/my-vessel'),
+  portfolio: fixed('/portfolio'),
+  administration: fixed('/administration'),
+  profile: fixed('/profile'),
+  reference: fixed('/reference'),
+  curve: page(
+    '/reference/curves/:curveId',
+    (curveId: string) => `/reference/curves/${encodeURIComponent(curveId)}`,
+  ),
+  registerVessel: fixed('/vessels/new'),
+  vessel: page('/vessels/:vesselId', (vesselId: string) => `/vessels/${vesselId}`),
+  editVessel: page('/vessels/:vesselId/edit', (vesselId: string) => `/vessels/${vesselId}/edit`),
+  usagePlan: page('/vessels/:vesselId/usage-plan', (vesselId: string) => `/vessels/${vesselId}/usage-plan`),
+  addPosition: page(
+    '/vessels/:vesselId/positions/new',
+    (vesselId: string) => `/vessels/${vesselId}/positions/new`,
+  ),
+  editPosition: page(
+    '/vessels/:vesselId/positions/:positionId/edit',
+    (vesselId: string, positionId: string) => `/vessels/${vesselId}/positions/${positionId}/edit`,
+  ),
+  fitPart: page(
+    '/vessels/:vesselId/positions/:positionId/fit',
+    (vesselId: string, positionId: string) => `/vessels/${vesselId}/positions/${positionId}/fit`,
+  ),
+  /** The Loads tab of the vessel page. */
+  loadLogs: page('/vessels/:vesselId/load-logs', (vesselId: string) => `/vessels/${vesselId}/load-logs`),
+  addLoadLog: page(
+    '/vessels/:vesselId/load-logs/new',
+    (vesselId: string) => `/vessels/${vesselId}/load-logs/new`,
+  ),
+  loadLog: page('/load-logs/:loadLogId', (loadLogId: string) => `/load-logs/${loadLogId}`),
+  part: page('/parts/:partId', (partId: string) => `/parts/${partId}`),
+  editPart: page('/parts/:partId/edit', (partId: string) => `/parts/${partId}/edit`),
+  removePart: page('/parts/:partId/remove', (partId: string) => `/parts/${partId}/remove`),
+} as const;

@@ -1,0 +1,99 @@
+import type { ComponentType } from 'react';
+import { createBrowserRouter, Navigate, type RouteObject } from 'react-router-dom';
+import { LoadingState } from '../components/feedback/loading-state';
+import { NotFoundPage } from '../pages/not-found/not-found.page';
+import { SignInPage } from '../pages/sign-in/sign-in.page';
+import { LandingRedirect } from './landing-redirect';
+import { paths } from './paths';
+import { RouteErrorPage } from './route-error.page';
+import { ShellLayout } from './shell-layout';
+import { SignedInGate } from './signed-in-gate';
+
+/** A page in a chunk of its own, loaded when its address is first opened; a fault in it leaves the shell standing. */
+function lazyPage<Module>(
+  path: string,
+  load: () => Promise<Module>,
+  pick: (module: Module) => ComponentType,
+  children?: RouteObject[],
+): RouteObject {
+  return {
+    path,
+    lazy: async () => ({ Component: pick(await load()) }),
+    errorElement: <RouteErrorPage />,
+    children,
+  };
+}
+
+/** Layout that brings antd's provider: everything below it may use antd. */
+const withAntd = (children: RouteObject[]): RouteObject => ({
+  lazy: async () => ({ Component: (await import('./antd-scope')).AntdScope }),
+  errorElement: <RouteErrorPage />,
+  children,
+});
+
+/** Pages without antd: light enough for a phone on a poor line. */
+const lightPages: RouteObject[] = [
+  lazyPage(
+    paths.fleet.pattern,
+    () => import('../pages/vessels/fleet.page'),
+    (module) => module.FleetPage,
+  ),
+  lazyPage(
+    paths.vessel.pattern,
+    () => import('../pages/vessels/vessel-layout.page'),
+    (module) => module.VesselLayoutPage,
+    [
+      {
+        index: true,
+        lazy: async () => ({ Component: (await import('../pages/vessels/vessel-rig.page')).VesselRigPage }),
+        errorElement: <RouteErrorPage />,
+      },
+      withAntd([
+        lazyPage(
+          paths.loadLogs.pattern,
+          () => import('../pages/load-logs/load-log-list.page'),
+          (module) => module.LoadLogListPage,
+        ),
+      ]),
+    ],
+  ),
+];
+
+const antdPages: RouteObject[] = [
+  lazyPage(
+    paths.loadLog.pattern,
+    () => import('../pages/load-logs/load-log-review.page'),
+    (module) => module.LoadLogReviewPage,
+  ),
+];
+
+/** The route tree; also used by specs with a router of their own. */
+export const routes: RouteObject[] = [
+  {
+    errorElement: <RouteErrorPage />,
+    HydrateFallback: LoadingState,
+    children: [
+      { path: paths.signIn.pattern, element: <SignInPage /> },
+      {
+        element: <SignedInGate />,
+        children: [
+          {
+            element: <ShellLayout />,
+            errorElement: <RouteErrorPage />,
+            children: [
+              { path: paths.home.pattern, element: <LandingRedirect /> },
+              { path: '/vessels', element: <Navigate to={paths.fleet.pattern} replace /> },
+              ...lightPages,
+              withAntd(antdPages),
+              { path: '*', element: <NotFoundPage /> },
+            ],
+          },
+        ],
+      },
+    ],
+  },
+];
+
+export function createAppRouter() {
+  return createBrowserRouter(routes);
+}

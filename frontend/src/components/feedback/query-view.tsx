@@ -1,0 +1,36 @@
+import type { UseQueryResult } from '@tanstack/react-query';
+import type { ReactNode } from 'react';
+import { ErrorState } from './error-state';
+import { LoadingState } from './loading-state';
+
+/**
+ * The three states of a query. A failed refresh keeps what was shown and says so above it: a stale figure with a
+ * notice beats an empty page, and a figure without the notice would pass for a fresh one.
+ */
+export function QueryView<Data>({
+  query,
+  loadingLabel,
+  children,
+}: {
+  query: UseQueryResult<Data, Error>;
+  loadingLabel?: string;
+  children: (data: Data) => ReactNode;
+}) {
+  if (query.data !== undefined) {
+    return (
+      <>
+        {query.isError ? (
+          <ErrorState
+            title="Not up to date"
+            error={query.error}
+            onRetry={() => void query.refetch()}
+            retryLabel="Refresh"
+          />
+        ) : null}
+        {children(query.data)}
+      </>
+    );
+  }
+  if (query.isError) return <ErrorState error={query.error} onRetry={() => void query.refetch()} />;
+  return <LoadingState label={loadingLabel} />;
+}
