@@ -1,3 +1,5 @@
+import { stripVTControlCharacters } from 'node:util';
+
 /** Prints the steps of a set-up script: what is going on, a sign of life in long ones, and how long each took. */
 
 const SIGN_OF_LIFE_MS = 10_000;
@@ -30,12 +32,7 @@ export function createProgress(total, write = (line) => process.stdout.write(`${
       try {
         const outcome = await work((text) => {
           // One line at most: build tools and npm print whole screens.
-          note = text
-            .replace(/\u001b\[[0-9;]*m/g, '')
-            .trim()
-            .split('\n')
-            .pop()
-            .slice(0, 100);
+          note = stripVTControlCharacters(text).trim().split('\n').pop().slice(0, 100);
         });
         write(`${label}: ${outcome === null ? 'nothing to do' : outcome || 'done'} (${seconds(begun)})`);
       } finally {

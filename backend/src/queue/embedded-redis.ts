@@ -101,7 +101,7 @@ function waitInBlockingPop(client: MockClient): void {
       const onModified = (key: unknown) => {
         if (tryQueued || String(key) !== source) return;
         tryQueued = true;
-        setImmediate(tryToPop);
+        setImmediate(() => void tryToPop());
       };
 
       waiting.add(giveUp);
