@@ -28,7 +28,7 @@ export class RainflowCounter {
   private lastDay = 0;
   /** 1 rising, -1 falling, 0 before the first change. */
   private direction = 0;
-  private samples = 0;
+  private counted = 0;
   private turns = 0;
   /** What was counted before this counter was restored from a state. */
   private before: LoadSpectrum | null = null;
@@ -53,11 +53,17 @@ export class RainflowCounter {
     return { step: this.step, spectrum: this.spectrum() };
   }
 
+  /** Samples counted so far. */
+  get samples(): number {
+    return this.counted + (this.before?.samples ?? 0);
+  }
+
   /** Points on the residue now, and distinct cycles held: what the counter's memory grows with. */
   get held(): { residue: number; cycles: number } {
     let cycles = 0;
     for (const bins of this.bins.values()) cycles += bins.size;
-    return { residue: this.top + 1, cycles };
+    if (this.before !== null) for (const day of this.before.days) cycles += day.cycles.count.length;
+    return { residue: this.top + 1 + (this.before?.residue.length ?? 0), cycles };
   }
 
   /**
@@ -125,7 +131,7 @@ export class RainflowCounter {
     this.last = last;
     this.lastDay = lastDay;
     this.direction = direction;
-    this.samples += n - missing;
+    this.counted += n - missing;
   }
 
   /** The load spectrum of everything so far. The counter can carry on afterwards. */
@@ -151,7 +157,7 @@ export class RainflowCounter {
       days,
       residue: new Float64Array(0),
       residueDay: new Int32Array(0),
-      samples: this.samples,
+      samples: this.counted,
       turningPoints: this.turns,
     };
     // The running extreme is a turning point of the history so far and may close cycles as one.
