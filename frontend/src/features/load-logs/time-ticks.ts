@@ -1,3 +1,5 @@
+import { zoneClock } from './zone-clock';
+
 const MINUTE_MS = 60_000;
 const HOUR_MS = 60 * MINUTE_MS;
 const DAY_MS = 24 * HOUR_MS;
@@ -27,36 +29,13 @@ export interface TimeTick {
   isDayStart: boolean;
 }
 
-function localParts(zone: string): (atMs: number) => number {
-  const format = new Intl.DateTimeFormat('en-GB', {
-    timeZone: zone,
-    hourCycle: 'h23',
-    year: 'numeric',
-    month: 'numeric',
-    day: 'numeric',
-    hour: 'numeric',
-    minute: 'numeric',
-    second: 'numeric',
-  });
-  return (atMs) => {
-    const part: Record<string, number> = {};
-    for (const { type, value } of format.formatToParts(atMs)) part[type] = Number(value);
-    return Date.UTC(part.year, part.month - 1, part.day, part.hour, part.minute, part.second);
-  };
-}
-
 /**
  * Marks for a time axis, at round times of the given zone's own clock: whole minutes, hours, days or months,
  * whichever gives at most `wanted` of them. Days keep starting at midnight across a change of clocks.
  */
 export function timeTicks(fromMs: number, toMs: number, zone: string, wanted: number): TimeTick[] {
   if (!(toMs > fromMs) || wanted < 1) return [];
-  const toLocal = localParts(zone);
-  const toInstant = (local: number): number => {
-    // The offset at the guess can differ from the one at the result only next to a change of clocks; once more settles it.
-    const guess = local - (toLocal(local) - local);
-    return local - (toLocal(guess) - guess);
-  };
+  const { toLocal, toInstant } = zoneClock(zone);
   const localFrom = toLocal(fromMs);
   const localTo = toLocal(toMs);
   const leastMs = (toMs - fromMs) / wanted;
