@@ -3,6 +3,7 @@ import { APP_FILTER, APP_GUARD, APP_INTERCEPTOR, APP_PIPE } from '@nestjs/core';
 import { ScheduleModule } from '@nestjs/schedule';
 import { ThrottlerGuard } from '@nestjs/throttler';
 import { ZodSerializerInterceptor, ZodValidationPipe } from 'nestjs-zod';
+import { AuditModule } from './audit/audit.module.js';
 import { AccessGuard } from './auth/access.guard.js';
 import { AuthModule } from './auth/auth.module.js';
 import { ClockModule } from './common/clock/clock.module.js';
@@ -10,9 +11,14 @@ import { ErrorFilter } from './common/errors/error.filter.js';
 import { ThrottlingModule } from './common/http/throttling.js';
 import { IdempotencyInterceptor } from './common/idempotency/idempotency.interceptor.js';
 import { ConfigModule } from './config/config.module.js';
+import { ConstructionsModule } from './constructions/constructions.module.js';
+import { CurvesModule } from './curves/curves.module.js';
 import { PersistenceModule } from './database/persistence.module.js';
 import { ReachInterceptor } from './database/reach.interceptor.js';
+import { FirmsModule } from './firms/firms.module.js';
 import { HealthModule } from './health/health.module.js';
+import { JobsModule } from './jobs/jobs.module.js';
+import { UsersModule } from './users/users.module.js';
 
 /** The API. What stands around every route, from the outside in, then the features. */
 @Module({
@@ -22,8 +28,14 @@ import { HealthModule } from './health/health.module.js';
     PersistenceModule,
     ThrottlingModule,
     ScheduleModule.forRoot(),
+    AuditModule,
     AuthModule,
+    ConstructionsModule,
+    CurvesModule,
+    FirmsModule,
     HealthModule,
+    JobsModule,
+    UsersModule,
   ],
   providers: [
     { provide: APP_FILTER, useClass: ErrorFilter },

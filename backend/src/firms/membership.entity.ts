@@ -1,5 +1,5 @@
 import { Entity, Index, PrimaryKey } from '@mikro-orm/core';
-import { ChoiceColumn, InstantColumn, References, TextColumn } from '../database/columns.js';
+import { ChoiceColumn, InstantColumn, References } from '../database/columns.js';
 import { User } from '../users/user.entity.js';
 import { Firm } from './firm.entity.js';
 
