@@ -10,8 +10,10 @@ import { Problem } from './problem.mjs';
  * a deleted or half-made folder is built again.
  */
 
-const STAMP = '.stayledger-built';
-const SERVER_WORKSPACES = ['shared', 'backend', 'jobs'];
+/** Written last into a built folder. */
+export const BUILT_STAMP = '.stayledger-built';
+export const SERVER_WORKSPACES = ['shared', 'backend', 'jobs'];
+export const WEB_SOURCES = ['shared', 'reference-data', 'frontend'];
 // Folders at the top of a workspace that no build reads.
 const NOT_SOURCES = new Set(['node_modules', 'dist', 'coverage', 'e2e', 'setup', 'bench']);
 
@@ -42,13 +44,13 @@ export function sourceFingerprint(root, workspaces) {
 
 function isFresh(dists, wanted) {
   return dists.every((dist) => {
-    const stamp = path.join(dist, STAMP);
+    const stamp = path.join(dist, BUILT_STAMP);
     return fs.existsSync(stamp) && fs.readFileSync(stamp, 'utf8') === wanted;
   });
 }
 
 function writeStamps(dists, wanted) {
-  for (const dist of dists) fs.writeFileSync(path.join(dist, STAMP), wanted);
+  for (const dist of dists) fs.writeFileSync(path.join(dist, BUILT_STAMP), wanted);
 }
 
 /**
@@ -99,7 +101,7 @@ export async function buildServer(root) {
 export async function buildWeb(root) {
   const frontend = path.join(root, 'frontend');
   const dists = [path.join(frontend, 'dist')];
-  const wanted = sourceFingerprint(root, ['shared', 'reference-data', 'frontend']);
+  const wanted = sourceFingerprint(root, WEB_SOURCES);
   if (isFresh(dists, wanted)) return null;
   const { code, stdout, stderr } = await run(
     [...programOf(frontend, 'vite'), 'build', '--logLevel', 'warn'],

@@ -40,6 +40,7 @@ const FORBIDDEN_IMPORTS = [
   ['shared/src/fatigue/x.ts', '../rig/positions.js', 'shared/units only'],
   ['shared/src/rig/x.ts', '../contracts/rig.js', 'shared/units and shared/fatigue'],
   ['shared/src/rig/x.ts', 'node:path', 'pure'],
+  ['shared/src/rerig-schedule/x.ts', '../contracts/rerig-schedules.js', 'shared/units and shared/fatigue'],
   ['shared/src/permissions/x.ts', 'zod', 'plain data'],
   ['shared/src/contracts/x.ts', '../fatigue/curves/curve.js', 'over the wire'],
   ['shared/src/contracts/x.ts', '@nestjs/common', 'A contract is Zod'],

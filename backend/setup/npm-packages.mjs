@@ -4,8 +4,11 @@ import * as path from 'node:path';
 import { run } from './child-processes.mjs';
 import { Problem } from './problem.mjs';
 
+/** Written last into node_modules. */
+export const INSTALLED_STAMP = 'node_modules/.stayledger-installed';
+
 /** What the installed packages depend on: the lock file, and the Node and platform that native parts are made for. */
-function fingerprint(root) {
+export function installedFingerprint(root) {
   return createHash('sha256')
     .update(fs.readFileSync(path.join(root, 'package-lock.json')))
     .update(`${process.version} ${process.platform} ${process.arch}`)
@@ -18,8 +21,8 @@ function fingerprint(root) {
  * Resolves with `null` when there was nothing to do.
  */
 export async function ensureNpmPackages(root, note = () => {}) {
-  const stamp = path.join(root, 'node_modules', '.stayledger-installed');
-  const wanted = fingerprint(root);
+  const stamp = path.join(root, INSTALLED_STAMP);
+  const wanted = installedFingerprint(root);
   if (fs.existsSync(stamp) && fs.readFileSync(stamp, 'utf8') === wanted) return null;
   // The npm that started us, if any: PATH may hold another.
   const npm = process.env.npm_execpath ? [process.execPath, process.env.npm_execpath] : ['npm'];

@@ -38,7 +38,11 @@ const jest = (cwd) => ({
 const STAGES = [
   { name: 'types', run: checkTypes },
   { name: 'lint', run: checkLint },
-  { name: 'setup', runner: vitest(at(), '--config', 'backend/setup/vitest.config.mjs') },
+  {
+    name: 'setup',
+    runner: vitest(at(), '--config', 'backend/setup/vitest.config.mjs'),
+    needs: ['postgresql'],
+  },
   { name: 'shared', runner: vitest(at('shared')) },
   { name: 'reference-data', runner: vitest(at('reference-data')) },
   { name: 'backend', runner: jest(at('backend')), needs: ['postgresql', 'redis'] },
