@@ -214,14 +214,13 @@ export class CsvScanner {
       let ended = false;
       for (; column <= lastWanted; column++) {
         const kind = kinds[column];
-        let byte = 0;
+        let byte: number;
         if (kind > 0) {
           let p = at;
           byte = bytes[p];
           const negative = byte === 45;
           if (negative) byte = bytes[++p];
           const digitsFrom = p;
-          let digits = 0;
           let whole = 0;
           let decimals = 0;
           byte -= 48;
@@ -229,7 +228,7 @@ export class CsvScanner {
             whole = (whole * 10 + byte) | 0;
             byte = bytes[++p] - 48;
           }
-          digits = p - digitsFrom;
+          let digits = p - digitsFrom;
           if (byte === point - 48 && point !== delimiter) {
             const decimalsFrom = ++p;
             byte = bytes[p] - 48;

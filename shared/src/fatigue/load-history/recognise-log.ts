@@ -5,6 +5,7 @@ import { parseLoadText } from './parse-load-text.js';
 import { parseTimeText } from './parse-time-text.js';
 import { isUnitText, readColumnHeader, withUnitText, type ColumnHeader } from './read-column-header.js';
 import { splitTableLine } from './split-table-line.js';
+import { DELIMITERS, tableLines } from './table-lines.js';
 
 /** What a column seems to hold. */
 export type LogColumnKind = 'time' | 'load' | 'wind-speed' | 'wind-angle' | 'other';
@@ -65,10 +66,7 @@ export interface LogRecognition {
 /** Bytes of a log's beginning that are enough to recognise it. */
 export const RECOGNITION_BYTES = 1 << 16;
 
-const DELIMITERS = [',', ';', '\t', '|'];
-const LINES_LOOKED_AT = 200;
 const ROWS_SHOWN = 8;
-const MOST_JOINED_LINES = 20;
 
 /**
  * Recognises a load log from its first bytes: delimiter, decimal sign, header, units, time, rate.
@@ -106,10 +104,11 @@ export function recogniseLog(
   const text = logText(head, hasBom ? 3 : 0);
   const onlyCr = !text.includes('\n') && text.includes('\r');
   recognition.lineEnd = onlyCr ? 'cr' : text.includes('\r\n') ? 'crlf' : 'lf';
-  const physicalLines = text.split(onlyCr ? '\r' : /\r?\n/);
-  // The last line may be cut off by the end of the bytes given.
-  if (physicalLines.length > 2 && head.length >= RECOGNITION_BYTES) physicalLines.pop();
-  const { lines, lineNumbers } = joinQuotedLines(physicalLines.slice(0, LINES_LOOKED_AT));
+  const { lines, lineNumbers } = tableLines(
+    text,
+    recognition.lineEnd === 'cr',
+    head.length >= RECOGNITION_BYTES,
+  );
 
   const tables = DELIMITERS.filter((d) => known.delimiter === undefined || d === known.delimiter);
   if (known.delimiter !== undefined && tables.length === 0) tables.push(known.delimiter);
@@ -154,25 +153,6 @@ function notText(head: Uint8Array): LogProblem | null {
   const nul = head.indexOf(0);
   if (nul < 0) return null;
   return { code: 'not-text', message: `The file is not a text table: byte ${nul + 1} is zero.`, line: 1 };
-}
-
-/** Joins lines whose quoted cell goes on in the next; a quote that stays open for long is an ordinary character. */
-function joinQuotedLines(physical: string[]): { lines: string[]; lineNumbers: number[] } {
-  const lines: string[] = [];
-  const lineNumbers: number[] = [];
-  const isOpen = (text: string) => (text.split('"').length - 1) % 2 === 1;
-  for (let i = 0; i < physical.length; i++) {
-    lineNumbers.push(i + 1);
-    let end = i + 1;
-    if (isOpen(physical[i])) {
-      const limit = Math.min(physical.length, i + MOST_JOINED_LINES);
-      while (end < limit && !isOpen(physical[end])) end++;
-      end = end < limit ? end + 1 : i + 1;
-    }
-    lines.push(physical.slice(i, end).join('\n'));
-    i = end - 1;
-  }
-  return { lines, lineNumbers };
 }
 
 interface Table {
@@ -242,13 +222,16 @@ function findHeader({ cells, firstRow, width }: Table): { headerLine: number; un
   }
   if (above.length === 0) return { headerLine: -1, unitLine: -1 };
   const nearest = cells[above[0]].filter((cell) => cell !== '');
-  const looksLikeUnits = nearest.every(
-    (cell) =>
-      isUnitText(cell.replace(/^[[({]\s*|\s*[\])}]$/g, '')) ||
-      /^(-+|UTC|ISO.*|hh:.*|h|sec|time)$/i.test(cell),
-  );
-  if (above.length === 2 && looksLikeUnits) return { headerLine: above[1], unitLine: above[0] };
+  if (above.length === 2 && looksLikeUnits(nearest)) return { headerLine: above[1], unitLine: above[0] };
   return { headerLine: above[0], unitLine: -1 };
+}
+
+/** Whether the filled cells of a line are all units, as in a row of units below a header. */
+export function looksLikeUnits(filled: string[]): boolean {
+  return filled.every((cell) => {
+    const text = cell.replace(/^[[({]\s*|\s*[\])}]$/g, '');
+    return isUnitText(text) || /^(-+|UTC|ISO.*|hh:.*|h|sec|time)$/i.test(text);
+  });
 }
 
 function describeWithoutRows(recognition: LogRecognition, cells: string[][], lineNumbers: number[]): void {

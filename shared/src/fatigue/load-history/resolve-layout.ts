@@ -1,9 +1,17 @@
+import { columnsNamed } from './columns-named.js';
 import { logText } from './log-text.js';
 import { LogConfigError, type LoadLogConfig } from './load-log.js';
 import type { CsvLayout } from './csv-scanner.js';
-import { isAveraged, recogniseLog, type LogRecognition, type RecognisedColumn } from './recognise-log.js';
+import {
+  isAveraged,
+  looksLikeUnits,
+  recogniseLog,
+  type LogRecognition,
+  type RecognisedColumn,
+} from './recognise-log.js';
 import { readColumnHeader } from './read-column-header.js';
 import { splitTableLine } from './split-table-line.js';
+import { DELIMITERS, tableLines } from './table-lines.js';
 
 /** Where in a log stands what its configuration asks for. */
 export interface ResolvedLayout {
@@ -30,7 +38,7 @@ export function resolveLayout(head: Uint8Array, config: LoadLogConfig): Resolved
   if (recognition.encoding === 'binary' || recognition.encoding === 'utf-16') {
     throw new LogConfigError(recognition.problems[0].message);
   }
-  const { columns, skipLines } = tableWith(head, recognition, config);
+  const { columns, delimiter, skipLines } = tableWith(head, recognition, config);
   const places: number[] = [];
   const channelPlaces: number[] = [];
   const otherUnit = new Map<number, string>();
@@ -58,7 +66,7 @@ export function resolveLayout(head: Uint8Array, config: LoadLogConfig): Resolved
   }
   return {
     csv: {
-      delimiter: recognition.delimiter.charCodeAt(0),
+      delimiter: delimiter.charCodeAt(0),
       decimalComma: recognition.decimalComma,
       lineEnd: recognition.lineEnd === 'cr' ? 13 : 10,
       skipLines,
@@ -73,50 +81,42 @@ export function resolveLayout(head: Uint8Array, config: LoadLogConfig): Resolved
   };
 }
 
-/**
- * The columns and the lines above the first row. When the recognised header lacks a configured column but an
- * other line near the top has them all, that line is the header.
- */
-function tableWith(
-  head: Uint8Array,
-  recognition: LogRecognition,
-  config: LoadLogConfig,
-): { columns: RecognisedColumn[]; skipLines: number } {
-  const recognised = { columns: recognition.columns, skipLines: recognition.firstRowLine - 1 };
-  const wanted = config.channels.map(({ column }) => column);
-  if ('column' in config.time) wanted.push(config.time.column);
-  if (wanted.every((name) => matching(recognition.columns, name).length > 0)) return recognised;
-  const text = logText(head, recognition.encoding === 'utf-8-bom' ? 3 : 0);
-  const lines = text.split(recognition.lineEnd === 'cr' ? '\r' : /\r?\n/).slice(0, 50);
-  for (let i = 0; i < lines.length; i++) {
-    const columns = splitTableLine(lines[i], recognition.delimiter).map((header, index) => {
-      const { name, unit } = readColumnHeader(header);
-      return { index, header, name, unit, kind: 'other' as const, firstValues: [] };
-    });
-    if (!wanted.every((name) => matching(columns, name).length > 0)) continue;
-    return { columns, skipLines: Math.max(i + 1, recognition.firstRowLine - 1) };
-  }
-  return recognised;
+interface NamedTable {
+  columns: RecognisedColumn[];
+  delimiter: string;
+  /** Physical lines above the first row. */
+  skipLines: number;
 }
 
-/** Columns a configured name can mean: the header itself, else its name without unit, else either in any case. */
-function matching(columns: RecognisedColumn[], name: string): RecognisedColumn[] {
-  const wanted = name.trim();
-  const rules: ((column: RecognisedColumn) => boolean)[] = [
-    (column) => column.header === wanted,
-    (column) => column.name === wanted,
-    (column) => column.header.toLowerCase() === wanted.toLowerCase(),
-    (column) => column.name.toLowerCase() === wanted.toLowerCase(),
-  ];
-  for (const rule of rules) {
-    const found = columns.filter(rule);
-    if (found.length > 0) return found;
+/**
+ * The table's columns. The header is the first line that has all configured names, whatever the rows below it
+ * look like; only without such a line the recognised table is taken, for example when there is no header.
+ */
+function tableWith(head: Uint8Array, recognition: LogRecognition, config: LoadLogConfig): NamedTable {
+  const wanted = config.channels.map(({ column }) => column);
+  if ('column' in config.time) wanted.push(config.time.column);
+  const text = logText(head, recognition.encoding === 'utf-8-bom' ? 3 : 0);
+  const { lines, lineNumbers } = tableLines(text, recognition.lineEnd === 'cr', false);
+  const delimiters = [recognition.delimiter, ...(config.delimiter === undefined ? DELIMITERS : [])];
+  for (const delimiter of delimiters) {
+    for (let i = 0; i < lines.length; i++) {
+      const columns = splitTableLine(lines[i], delimiter).map((header, index) => {
+        const { name, unit } = readColumnHeader(header);
+        return { index, header, name, unit, kind: 'other' as const, firstValues: [] };
+      });
+      if (!wanted.every((name) => columnsNamed(columns, name).length > 0)) continue;
+      const below = i + 1 < lines.length ? splitTableLine(lines[i + 1], delimiter) : [];
+      const filled = below.filter((cell) => cell !== '');
+      const first = filled.length > 0 && looksLikeUnits(filled) ? i + 2 : i + 1;
+      return { columns, delimiter, skipLines: lineNumbers[first] - 1 };
+    }
   }
-  return [];
+  const { columns, delimiter, firstRowLine } = recognition;
+  return { columns, delimiter, skipLines: firstRowLine - 1 };
 }
 
 function columnNamed(columns: RecognisedColumn[], name: string): RecognisedColumn {
-  const found = matching(columns, name);
+  const found = columnsNamed(columns, name);
   if (found.length === 0) {
     const known = columns.map(({ header }) => `"${header}"`).join(', ');
     throw new LogConfigError(`the log has no column "${name}"; it has ${known === '' ? 'none' : known}`);

@@ -2,8 +2,6 @@ import { emptyCycleTable } from './cycle-table.js';
 import type { CycleTable } from './load-spectrum.js';
 
 const FIRST_SLOTS = 1024;
-/** Levels beyond this do not fit the compact table. */
-const LARGEST_LEVEL = 2 ** 31 - 1;
 const WORDS = 4;
 
 /**
