@@ -48,24 +48,31 @@ const lightPages: RouteObject[] = [
         lazy: async () => ({ Component: (await import('../pages/vessels/vessel-rig.page')).VesselRigPage }),
         errorElement: <RouteErrorPage />,
       },
-      withAntd([
-        lazyPage(
-          paths.loadLogs.pattern,
-          () => import('../pages/load-logs/load-log-list.page'),
-          (module) => module.LoadLogListPage,
-        ),
-      ]),
+      lazyPage(
+        paths.loadLogs.pattern,
+        () => import('../pages/load-logs/load-log-list.page'),
+        (module) => module.LoadLogListPage,
+      ),
     ],
   ),
-];
-
-const antdPages: RouteObject[] = [
+  lazyPage(
+    paths.addLoadLog.pattern,
+    () => import('../pages/load-logs/add-load-log.page'),
+    (module) => module.AddLoadLogPage,
+  ),
   lazyPage(
     paths.loadLog.pattern,
     () => import('../pages/load-logs/load-log-review.page'),
     (module) => module.LoadLogReviewPage,
   ),
+  lazyPage(
+    paths.part.pattern,
+    () => import('../pages/parts/part.page'),
+    (module) => module.PartPage,
+  ),
 ];
+
+const antdPages: RouteObject[] = [];
 
 /** The route tree; also used by specs with a router of their own. */
 export const routes: RouteObject[] = [

@@ -9,11 +9,11 @@ export interface FileFingerprint {
 }
 
 export async function fingerprintOf(file: File): Promise<FileFingerprint> {
-  const head = await file.slice(0, HEAD_BYTES).arrayBuffer();
+  const head = new Uint8Array(await file.slice(0, HEAD_BYTES).arrayBuffer());
   return { fileName: file.name, sizeBytes: file.size, headSha256: await sha256Hex(head) };
 }
 
-async function sha256Hex(bytes: ArrayBuffer): Promise<string> {
+async function sha256Hex(bytes: Uint8Array<ArrayBuffer>): Promise<string> {
   // Browsers offer the digest only over TLS and on loopback. On plain HTTP the name and size must do.
   if (globalThis.crypto?.subtle === undefined) return '';
   const digest = new Uint8Array(await globalThis.crypto.subtle.digest('SHA-256', bytes));

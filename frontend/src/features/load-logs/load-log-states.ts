@@ -23,7 +23,7 @@ const WORDS: Record<LoadLogState, StateWords> = {
   },
   counting: {
     word: 'Being counted',
-    meaning: 'Cycles are being counted. You may leave this page.',
+    meaning: 'Cycles are being counted.',
     moving: true,
   },
   counted: {
