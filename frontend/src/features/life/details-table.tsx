@@ -60,7 +60,8 @@ function columns(life: PartLifeDto, format: Formatter, zone: string): DataTableC
       key: 'factor',
       title: 'Design fatigue factor',
       numeric: true,
-      render: (detail) => format.significant(detail.designFatigueFactor, 3),
+      render: (detail) =>
+        format.number(detail.designFatigueFactor, Number.isInteger(detail.designFatigueFactor) ? 0 : 1),
       value: (detail) => detail.designFatigueFactor,
     },
     {

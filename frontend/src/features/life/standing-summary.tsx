@@ -32,7 +32,9 @@ export function StandingSummary({ life, zone }: { life: PartLifeDto; zone: strin
         <dd>{remainingYears === null ? 'no figure' : remainingLife(remainingYears, format)}</dd>
         <dd>
           {remainingYears === null
-            ? 'The list below says what would give one.'
+            ? life.wouldGiveDate.length > 0
+              ? 'The list below says what would give one.'
+              : ''
             : 'At the planned sailing, on the rule’s curve. Its spread is not computed yet.'}
         </dd>
       </div>

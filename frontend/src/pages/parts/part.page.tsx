@@ -119,7 +119,8 @@ function PartAccount({ life, part, vessel }: { life: PartLifeDto; part: FittedPa
           )}
         </section>
       )}
-      <section className={styles.section} aria-label="Account of this part">
+      <section className={styles.section} aria-labelledby="account">
+        <h2 id="account">Account</h2>
         <AllowanceChart life={life} zone={vessel.zone} />
       </section>
       <section className={styles.section} aria-labelledby="details">
@@ -145,7 +146,8 @@ function PartAccount({ life, part, vessel }: { life: PartLifeDto; part: FittedPa
           ))}
         </ul>
       </section>
-      <section className={styles.section} aria-label="Cycles">
+      <section className={styles.section} aria-labelledby="cycles">
+        <h2 id="cycles">Cycles</h2>
         <CyclesChart life={life} />
       </section>
       <section className={styles.section} aria-labelledby="working">
