@@ -1,4 +1,3 @@
-// @vitest-environment node
 import { gzipSync } from 'node:zlib';
 import { describe, expect, it } from 'vitest';
 import { FileHeadError, HEAD_BYTES, readHead } from './read-head';
