@@ -122,7 +122,7 @@ export function rigColumns({
           {part ? (
             <>
               <Link to={paths.editPart.to(part.id)} aria-label={`Edit the part at ${label}`}>
-                Edit
+                Part
               </Link>
               <Link to={paths.removePart.to(part.id)} aria-label={`Take off the part at ${label}`}>
                 Take off
@@ -133,6 +133,9 @@ export function rigColumns({
               Fit a part
             </Link>
           )}
+          <Link to={paths.editPosition.to(vesselId, id)} aria-label={`Edit the position ${label}`}>
+            Position
+          </Link>
         </span>
       ),
     },
