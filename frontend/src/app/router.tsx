@@ -34,6 +34,16 @@ const withAntd = (children: RouteObject[]): RouteObject => ({
 /** Pages without antd: light enough for a phone on a poor line. */
 const lightPages: RouteObject[] = [
   lazyPage(
+    paths.myVessel.pattern,
+    () => import('../pages/my-vessel/my-vessel.page'),
+    (module) => module.MyVesselPage,
+  ),
+  lazyPage(
+    paths.portfolio.pattern,
+    () => import('../pages/portfolio/portfolio.page'),
+    (module) => module.PortfolioPage,
+  ),
+  lazyPage(
     paths.fleet.pattern,
     () => import('../pages/vessels/fleet.page'),
     (module) => module.FleetPage,
