@@ -1,11 +1,11 @@
 import { Module } from '@nestjs/common';
-import { ReachModule } from '../vessels/reach.module.js';
+import { VesselReachModule } from '../vessels/vessel-reach.module.js';
 import { AuditEventsService } from './audit-events.service.js';
 import { AuditController } from './audit.controller.js';
 import { AuditService } from './audit.service.js';
 
 @Module({
-  imports: [ReachModule],
+  imports: [VesselReachModule],
   controllers: [AuditController],
   providers: [AuditService, AuditEventsService],
   exports: [AuditService],

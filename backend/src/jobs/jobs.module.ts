@@ -1,8 +1,8 @@
 import { Module } from '@nestjs/common';
-import { ReachModule } from '../vessels/reach.module.js';
+import { VesselReachModule } from '../vessels/vessel-reach.module.js';
 import { JobsController } from './jobs.controller.js';
 import { JobsService } from './jobs.service.js';
 
 /** Reading job rows. The work itself is done in the workspace `jobs`. */
-@Module({ imports: [ReachModule], controllers: [JobsController], providers: [JobsService] })
+@Module({ imports: [VesselReachModule], controllers: [JobsController], providers: [JobsService] })
 export class JobsModule {}

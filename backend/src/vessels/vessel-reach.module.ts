@@ -3,4 +3,4 @@ import { VesselReach } from './vessel-reach.service.js';
 
 /** Apart from `VesselsModule`, so that every feature may ask for reach without importing the features of vessels. */
 @Module({ providers: [VesselReach], exports: [VesselReach] })
-export class ReachModule {}
+export class VesselReachModule {}
