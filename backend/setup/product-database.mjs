@@ -123,6 +123,11 @@ export async function openExistingServer({ databaseUrl: ownerUrl, appUrl, secret
   } catch (error) {
     throw new Problem(
       `The application's role cannot connect to the database: ${error.message || error.code}`,
+      ...(appUrl
+        ? []
+        : [
+            `If the role ${APP_ROLE} was made for another installation, give its address as DATABASE_APP_URL.`,
+          ]),
     );
   }
   return {
@@ -135,11 +140,16 @@ export async function openExistingServer({ databaseUrl: ownerUrl, appUrl, secret
   };
 }
 
+/**
+ * Makes the application's role. One that is there already is left as it is: roles belong to the whole server, and
+ * changing its password could lock another installation out.
+ */
 async function ensureAppRole(client, password) {
   const { rows } = await client.query('select current_database() as database');
   const database = client.escapeIdentifier(rows[0].database);
+  const known = await client.query('select 1 from pg_roles where rolname = $1', [APP_ROLE]);
   try {
-    await ensureRoles(client, { [APP_ROLE]: password });
+    if (!known.rowCount) await ensureRoles(client, { [APP_ROLE]: password });
     await client.query(`grant connect on database ${database} to ${APP_ROLE}`);
   } catch (error) {
     // 42501: insufficient privilege.
