@@ -173,6 +173,7 @@ export class RainflowCounter {
   }
 
   private place(level: number, day: number): void {
+    if (level - level !== 0) throw new RangeError('a load is infinite');
     if (this.top + 1 >= this.stack.length) this.growStack();
     const { stack, stackDay } = this;
     let top = this.top;
