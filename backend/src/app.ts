@@ -14,6 +14,7 @@ import { webApp } from './common/http/web-app.js';
 import { AppLogger } from './common/logging/app-logger.js';
 import { ENV } from './config/config.module.js';
 import type { Env } from './config/env.js';
+import { UPLOADS_PATH, UploadsHandler } from './load-logs/uploads.handler.js';
 
 /** Contracts allow no reply or request near this size; load logs go another way. */
 const BODY_LIMIT = '256kb';
@@ -45,6 +46,7 @@ export function configureApp(
   app.use(requestContext);
   app.use(securityHeaders(env.PUBLIC_URL?.startsWith('https:') ?? false));
   app.use('/api', neverStored, ...sessions.handlers, refuseCrossSite(env.PUBLIC_URL));
+  app.use(UPLOADS_PATH, app.get(UploadsHandler).handle);
   app.use('/api', jsonOnly(['/uploads']), express.json({ limit: BODY_LIMIT }));
   mountOpenApi(app);
   app.use(webApp(webAppFolder));

@@ -78,7 +78,8 @@ describe('LocalFolderLogStorage', () => {
     await utimes(join(root, young.vesselId, `${young.loadLogId}.part`), 1_800_000_000, 1_800_000_000);
 
     expect(await storage.halfReceivedBefore((1_800_000_000 - hourS) * 1000)).toEqual([key]);
-    expect(await storage.completed()).toEqual([done]);
+    expect(await storage.completedSince(0)).toEqual([done]);
+    expect(await storage.completedSince(Date.now() + hourS * 1000)).toEqual([]);
 
     await storage.discard(key);
     expect(await storage.received(key)).toBeNull();

@@ -4,13 +4,8 @@ import { mkdir, open, readdir, rename, rm, stat, statfs } from 'node:fs/promises
 import { dirname, join } from 'node:path';
 import type { Readable } from 'node:stream';
 import { pipeline } from 'node:stream/promises';
-import {
-  type LogStorage,
-  type ReceivedSoFar,
-  StorageFullError,
-  type StorageKey,
-  type StoredFile,
-} from './log-storage.js';
+import { StorageFullError } from '../common/errors/app-error.js';
+import { type LogStorage, type ReceivedSoFar, type StorageKey, type StoredFile } from './log-storage.js';
 
 const ID = /^[0-9a-f]{8}-[0-9a-f]{4}-[0-9a-f]{4}-[0-9a-f]{4}-[0-9a-f]{12}$/;
 const PART = '.part';
@@ -46,7 +41,10 @@ export class LocalFolderLogStorage implements LogStorage {
       await pipeline(source, target);
     } catch (error) {
       if (hasCode(error, 'ENOSPC') || hasCode(error, 'EDQUOT')) {
-        throw new StorageFullError('The storage of the service is full.', { cause: error });
+        throw new StorageFullError(
+          'The storage of the service is full. What arrived is kept: make room, then go on.',
+          { cause: error },
+        );
       }
       throw error;
     }
@@ -91,8 +89,14 @@ export class LocalFolderLogStorage implements LogStorage {
     return old;
   }
 
-  completed(): Promise<StorageKey[]> {
-    return this.list((name) => !name.endsWith(PART));
+  async completedSince(instantMs: number): Promise<StorageKey[]> {
+    const recent: StorageKey[] = [];
+    for (const key of await this.list((name) => !name.endsWith(PART))) {
+      // Renaming changes the status of a file, not its contents: ctime is the moment it became complete.
+      const found = await stat(this.finalPath(key)).catch(() => null);
+      if (found && found.ctimeMs >= instantMs) recent.push(key);
+    }
+    return recent;
   }
 
   async freeBytes(): Promise<number> {

@@ -40,14 +40,9 @@ export interface LogStorage {
   discard(key: StorageKey): Promise<void>;
   /** Files on their way whose last byte came before the given instant. */
   halfReceivedBefore(instantMs: number): Promise<StorageKey[]>;
-  /** Complete files, for checks after a crash. */
-  completed(): Promise<StorageKey[]>;
+  /** Files that became complete at the given instant or later, for checks after a crash. */
+  completedSince(instantMs: number): Promise<StorageKey[]>;
   freeBytes(): Promise<number>;
 }
 
 export const LOG_STORAGE = Symbol('LogStorage');
-
-/** The device has no room for what is to be written. */
-export class StorageFullError extends Error {
-  override readonly name = 'StorageFullError';
-}

@@ -1,0 +1,94 @@
+import { EntityManager } from '@mikro-orm/postgresql';
+import { Injectable } from '@nestjs/common';
+import type {
+  LoadLogDto,
+  PostLoadLogInput,
+  SetAsideLoadLogInput,
+} from '@stayledger/shared/contracts/load-logs';
+import { AuditService } from '../audit/audit.service.js';
+import type { Principal } from '../auth/principal.js';
+import { Clock } from '../common/clock/clock.js';
+import { StateConflictError } from '../common/errors/app-error.js';
+import { AccountService } from '../ledger/account.service.js';
+import { PartStandingService } from '../life/part-standing.service.js';
+import { LoadLogReplies } from './load-log-replies.js';
+import { LoadLogsService } from './load-logs.service.js';
+import { PostingPlanService } from './posting-plan.service.js';
+
+/** What people decide about a counted log. Each decision is one transaction; nothing is posted without one. */
+@Injectable()
+export class DecisionsService {
+  constructor(
+    private readonly em: EntityManager,
+    private readonly logs: LoadLogsService,
+    private readonly replies: LoadLogReplies,
+    private readonly plan: PostingPlanService,
+    private readonly accounts: AccountService,
+    private readonly standings: PartStandingService,
+    private readonly audit: AuditService,
+    private readonly clock: Clock,
+  ) {}
+
+  /** Posts a counted log to the accounts of the parts it was recorded on, and rewrites where they stand. */
+  async post(me: Principal, loadLogId: string, input: PostLoadLogInput): Promise<LoadLogDto> {
+    const log = await this.logs.lockOrFail(me, loadLogId, 'load-logs:post', input.version);
+    await this.lockParts(log.mapping.channels.map(({ positionId }) => positionId));
+    const obstacle = await this.plan.obstacle(log);
+    if (obstacle !== null) throw new StateConflictError(obstacle, await this.replies.one(log));
+    const now = this.clock.now();
+    const receivers = await this.plan.receivers(log);
+    this.em.assign(log, { state: 'posted', decidedBy: me.userId, decidedAt: now, updatedAt: now });
+    await this.em.flush();
+    for (const part of receivers) {
+      await this.accounts.settle(this.em, part, me.userId);
+      await this.standings.recompute(this.em, part.id);
+    }
+    await this.audit.record(this.em, {
+      userId: me.userId,
+      vesselId: log.vessel,
+      action: 'load-log.posted',
+      subjectKind: 'load-log',
+      subjectId: log.id,
+      data: { partIds: receivers.map(({ id }) => id), sha256: log.sha256 },
+    });
+    return this.replies.one(log);
+  }
+
+  /** Keeps a log out of the ledger, with the reason. */
+  async setAside(me: Principal, loadLogId: string, input: SetAsideLoadLogInput): Promise<LoadLogDto> {
+    const log = await this.logs.lockOrFail(me, loadLogId, 'load-logs:post', input.version);
+    if (log.state !== 'counted' && log.state !== 'failed') {
+      throw new StateConflictError(
+        log.state === 'posted'
+          ? 'This log is posted to the ledger; entries are never taken back with it.'
+          : `This log is ${log.state}; only a counted or failed log can be set aside.`,
+        await this.replies.one(log),
+      );
+    }
+    const now = this.clock.now();
+    this.em.assign(log, {
+      state: 'set-aside',
+      decidedBy: me.userId,
+      decidedAt: now,
+      decisionReason: input.reason,
+      updatedAt: now,
+    });
+    await this.em.flush();
+    await this.audit.record(this.em, {
+      userId: me.userId,
+      vesselId: log.vessel,
+      action: 'load-log.set-aside',
+      subjectKind: 'load-log',
+      subjectId: log.id,
+      data: { reason: input.reason },
+    });
+    return this.replies.one(log);
+  }
+
+  /** In the order of their ids, so that two postings of different logs never wait for each other in a circle. */
+  private async lockParts(positionIds: string[]): Promise<void> {
+    await this.em.execute('select id from fitted_part where position_id = any (?) order by id for update', [
+      positionIds,
+    ]);
+  }
+}

@@ -1,0 +1,133 @@
+import { LockMode } from '@mikro-orm/core';
+import { EntityManager } from '@mikro-orm/postgresql';
+import { Inject, Injectable, Logger } from '@nestjs/common';
+import { Interval } from '@nestjs/schedule';
+import { COUNT_LOAD_LOG } from '@stayledger/shared/queues/load-logs.queue';
+import { AuditService } from '../audit/audit.service.js';
+import { Clock } from '../common/clock/clock.js';
+import { withAccess } from '../database/reach.js';
+import { JobQueue } from '../queue/job-queue.js';
+import { LOG_STORAGE, type LogStorage, type StorageKey } from '../storage/log-storage.js';
+import { sniffLogFile } from '../storage/sniff-log-file.js';
+import { LoadLog } from './load-log.entity.js';
+
+/** An upload that was not gone on with for so long is given up. */
+export const UPLOAD_EXPIRY_MS = 7 * 24 * 3_600_000;
+const SWEEP_EVERY_MS = 60_000;
+
+/** Takes over files whose last byte has arrived, and clears away those that never got so far. */
+@Injectable()
+export class LogReceiver {
+  private readonly logger = new Logger(LogReceiver.name);
+  private sweeping: Promise<void> | null = null;
+  /** Zero at start: whatever a crash left behind is looked at once. */
+  private checkedUntilMs = 0;
+
+  constructor(
+    private readonly em: EntityManager,
+    private readonly jobs: JobQueue,
+    private readonly audit: AuditService,
+    private readonly clock: Clock,
+    @Inject(LOG_STORAGE) private readonly storage: LogStorage,
+  ) {}
+
+  /**
+   * Makes a fully received file durable, judges it by its contents and announces the job that counts it. Does nothing
+   * for a log that was taken over before, so it may be repeated after a crash at any point.
+   */
+  async takeOver(key: StorageKey): Promise<void> {
+    const announced = await withAccess(this.em, key, (em) => em.findOne(LoadLog, { id: key.loadLogId }));
+    if (announced?.state !== 'receiving') return;
+    const stored = await this.storage.complete(key);
+    const sniffed = await sniffLogFile(this.storage.read(key));
+    const failure =
+      stored.sizeBytes !== announced.sizeBytes
+        ? {
+            code: 'size-differs',
+            message: `${stored.sizeBytes} bytes arrived, ${announced.sizeBytes} were announced. Add the log anew.`,
+          }
+        : sniffed.kind === 'other'
+          ? { code: 'not-a-table', message: sniffed.refusal }
+          : null;
+
+    await withAccess(this.em, key, async (em) => {
+      const log = await em.findOneOrFail(LoadLog, key.loadLogId, { lockMode: LockMode.PESSIMISTIC_WRITE });
+      if (log.state !== 'receiving') return;
+      em.assign(log, {
+        state: failure === null ? 'received' : 'failed',
+        receivedBytes: stored.sizeBytes,
+        sha256: stored.sha256,
+        storageKey: `${key.vesselId}/${key.loadLogId}`,
+        failure,
+        updatedAt: this.clock.now(),
+      });
+      await em.flush();
+      if (failure === null) {
+        await this.jobs.announce(em, {
+          kind: COUNT_LOAD_LOG,
+          subjectId: log.id,
+          vesselId: log.vessel,
+          inputVersion: log.mappingVersion,
+        });
+      }
+      await this.audit.record(em, {
+        userId: log.uploadedBy,
+        vesselId: log.vessel,
+        action: failure === null ? 'load-log.received' : 'load-log.refused',
+        subjectKind: 'load-log',
+        subjectId: log.id,
+        data: { sha256: stored.sha256, sizeBytes: stored.sizeBytes },
+      });
+    });
+  }
+
+  @Interval(SWEEP_EVERY_MS)
+  sweep(): Promise<void> {
+    this.sweeping ??= this.sweepOnce()
+      .catch((error: unknown) => this.logger.warn(`sweep of received files: ${String(error)}`))
+      .finally(() => {
+        this.sweeping = null;
+      });
+    return this.sweeping;
+  }
+
+  /** Finishes what a crash interrupted between the last byte and the row, and gives up what was abandoned. */
+  private async sweepOnce(): Promise<void> {
+    const now = this.clock.now().getTime();
+    for (const key of await this.storage.completedSince(this.checkedUntilMs)) {
+      const log = await this.logOf(key);
+      if (log?.state === 'receiving') await this.takeOver(key);
+    }
+    // An hour of overlap for clocks of file systems that are not ours.
+    this.checkedUntilMs = now - 3_600_000;
+    for (const key of await this.storage.halfReceivedBefore(now)) {
+      const log = await this.logOf(key);
+      const received = await this.storage.received(key);
+      if (log?.state === 'receiving' && received?.bytes === log.sizeBytes) await this.takeOver(key);
+    }
+    for (const key of await this.storage.halfReceivedBefore(now - UPLOAD_EXPIRY_MS)) {
+      await this.giveUp(key);
+    }
+  }
+
+  private async giveUp(key: StorageKey): Promise<void> {
+    await withAccess(this.em, key, async (em) => {
+      const log = await em.findOne(LoadLog, key.loadLogId, { lockMode: LockMode.PESSIMISTIC_WRITE });
+      if (log?.state !== 'receiving') return;
+      em.assign(log, {
+        state: 'failed',
+        failure: {
+          code: 'upload-abandoned',
+          message: 'The upload was not finished within seven days and was cleared away. Add the log anew.',
+        },
+        updatedAt: this.clock.now(),
+      });
+    });
+    await this.storage.discard(key);
+    this.logger.log({ message: 'cleared away a half-received file', loadLogId: key.loadLogId });
+  }
+
+  private logOf(key: StorageKey): Promise<LoadLog | null> {
+    return withAccess(this.em, key, (em) => em.findOne(LoadLog, { id: key.loadLogId }));
+  }
+}
