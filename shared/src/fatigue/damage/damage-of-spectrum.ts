@@ -46,7 +46,7 @@ const HISTOGRAM_BINS = 120;
  */
 export function damageOfSpectrum(spectrum: LoadSpectrum, detail: DetailModel): SpectrumDamage {
   const evaluator = new CycleEvaluator(detail);
-  const maxLevel = spectrum.step > 0 && evaluator.dependsOnRangeOnly ? largestLevelRange(spectrum) : Infinity;
+  const maxLevel = spectrum.step > 0 && evaluator.dependsOnRangeOnly ? levelWidth(spectrum) : Infinity;
   const parts =
     maxLevel <= MAX_TABLE_LEVELS ? byRangeLevel(spectrum, evaluator, maxLevel) : byCycle(spectrum, evaluator);
   return summarise(parts, detail);
@@ -54,77 +54,78 @@ export function damageOfSpectrum(spectrum: LoadSpectrum, detail: DetailModel): S
 
 /** Distinct ranges with their counts and damages, and the damage of each day; the two ways of working fill the same. */
 interface Parts {
-  ranges: Float64Array;
-  counts: Float64Array;
-  damages: Float64Array;
+  ranges: ArrayLike<number>;
+  counts: ArrayLike<number>;
+  damages: ArrayLike<number>;
   closed: number;
   residue: number;
   byDay: Map<number, number>;
 }
 
-function largestLevelRange(spectrum: LoadSpectrum): number {
-  let largest = 0;
+/** A width no range exceeds: highest less lowest level. Ranges themselves would cost a pass over three arrays. */
+function levelWidth(spectrum: LoadSpectrum): number {
+  const { residue } = spectrum;
+  let lowest = Infinity;
+  let highest = -Infinity;
   for (const { cycles } of spectrum.days) {
     const { low, high } = cycles;
-    for (let i = 0; i < low.length; i++) {
-      const range = high[i] - low[i];
-      if (range > largest) largest = range;
-    }
+    for (let i = 0; i < low.length; i++) if (low[i] < lowest) lowest = low[i];
+    for (let i = 0; i < high.length; i++) if (high[i] > highest) highest = high[i];
   }
-  const { residue } = spectrum;
-  for (let i = 1; i < residue.length; i++) largest = Math.max(largest, Math.abs(residue[i] - residue[i - 1]));
-  return largest;
+  for (let i = 0; i < residue.length; i++) {
+    lowest = Math.min(lowest, residue[i]);
+    highest = Math.max(highest, residue[i]);
+  }
+  return highest < lowest ? 0 : highest - lowest;
 }
 
 function byRangeLevel(spectrum: LoadSpectrum, evaluator: CycleEvaluator, maxLevel: number): Parts {
   const { days, residue, residueDay, step } = spectrum;
+  const rangePerLevel = step * evaluator.rangePerKn;
+  // Filled when a level is first met: a wide grid is used in few of its levels.
+  const damagePerCycle = new Float64Array(maxLevel + 1).fill(NaN);
+  const damageAt = (level: number): number => {
+    const known = damagePerCycle[level];
+    return known === known
+      ? known
+      : (damagePerCycle[level] = evaluator.damageOf(level * rangePerLevel, 0, 0));
+  };
+
   const closedCounts = new Float64Array(maxLevel + 1);
-  for (const { cycles } of days) {
-    const { low, high, count } = cycles;
-    for (let i = 0; i < low.length; i++) closedCounts[high[i] - low[i]] += count[i];
-  }
-  const residueCounts = new Float64Array(maxLevel + 1);
-  for (let i = 1; i < residue.length; i++) residueCounts[Math.abs(residue[i] - residue[i - 1])] += 0.5;
-
-  const damagePerCycle = new Float64Array(maxLevel + 1);
-  const ranges = new Float64Array(maxLevel + 1);
-  const counts = new Float64Array(maxLevel + 1);
-  const damages = new Float64Array(maxLevel + 1);
-  const closed = new CompensatedSum();
-  const open = new CompensatedSum();
-  let distinct = 0;
-  for (let level = 0; level <= maxLevel; level++) {
-    const count = closedCounts[level] + residueCounts[level];
-    if (count === 0) continue;
-    const range = level * step * evaluator.rangePerKn;
-    const perCycle = evaluator.damageOf(range, 0, 0);
-    damagePerCycle[level] = perCycle;
-    ranges[distinct] = range;
-    counts[distinct] = count;
-    damages[distinct++] = count * perCycle;
-    closed.add(closedCounts[level] * perCycle);
-    open.add(residueCounts[level] * perCycle);
-  }
-
   const byDay = new Map<number, number>();
   for (const { day, cycles } of days) {
     const { low, high, count } = cycles;
     let damage = 0;
-    for (let i = 0; i < low.length; i++) damage += count[i] * damagePerCycle[high[i] - low[i]];
+    for (let i = 0; i < low.length; i++) {
+      const level = high[i] - low[i];
+      closedCounts[level] += count[i];
+      damage += count[i] * damageAt(level);
+    }
     addToDay(byDay, day, damage);
   }
+  const residueCounts = new Float64Array(maxLevel + 1);
   for (let i = 1; i < residue.length; i++) {
-    const damage = 0.5 * damagePerCycle[Math.abs(residue[i] - residue[i - 1])];
-    addToDay(byDay, residueDay[residue[i] > residue[i - 1] ? i : i - 1], damage);
+    const level = Math.abs(residue[i] - residue[i - 1]);
+    residueCounts[level] += 0.5;
+    addToDay(byDay, residueDay[residue[i] > residue[i - 1] ? i : i - 1], 0.5 * damageAt(level));
   }
-  return {
-    ranges: ranges.subarray(0, distinct),
-    counts: counts.subarray(0, distinct),
-    damages: damages.subarray(0, distinct),
-    closed: closed.value,
-    residue: open.value,
-    byDay,
-  };
+
+  const ranges: number[] = [];
+  const counts: number[] = [];
+  const damages: number[] = [];
+  const closed = new CompensatedSum();
+  const open = new CompensatedSum();
+  for (let level = 0; level <= maxLevel; level++) {
+    const count = closedCounts[level] + residueCounts[level];
+    if (count === 0) continue;
+    const perCycle = damagePerCycle[level];
+    ranges.push(level * rangePerLevel);
+    counts.push(count);
+    damages.push(count * perCycle);
+    closed.add(closedCounts[level] * perCycle);
+    open.add(residueCounts[level] * perCycle);
+  }
+  return { ranges, counts, damages, closed: closed.value, residue: open.value, byDay };
 }
 
 function byCycle(spectrum: LoadSpectrum, evaluator: CycleEvaluator): Parts {

@@ -21,9 +21,9 @@ export interface RangeBin {
  * @param binCount number of bins over the whole width
  */
 export function rangeHistogram(
-  ranges: Float64Array,
-  counts: Float64Array,
-  damages: Float64Array,
+  ranges: ArrayLike<number>,
+  counts: ArrayLike<number>,
+  damages: ArrayLike<number>,
   largest: number,
   binCount: number,
 ): RangeBin[] {
