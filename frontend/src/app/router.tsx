@@ -34,6 +34,16 @@ const withAntd = (children: RouteObject[]): RouteObject => ({
 /** Pages without antd: light enough for a phone on a poor line. */
 const lightPages: RouteObject[] = [
   lazyPage(
+    paths.administration.pattern,
+    () => import('../pages/administration/administration.page'),
+    (module) => module.AdministrationPage,
+  ),
+  lazyPage(
+    paths.curve.pattern,
+    () => import('../pages/reference/curve.page'),
+    (module) => module.CurvePage,
+  ),
+  lazyPage(
     paths.myVessel.pattern,
     () => import('../pages/my-vessel/my-vessel.page'),
     (module) => module.MyVesselPage,

@@ -1,6 +1,8 @@
 import { preferencesSchema, type Preferences, type SessionDto } from '@stayledger/shared/contracts/auth';
 import type { Permission, Role } from '@stayledger/shared/permissions/permissions';
+import { useQueryClient } from '@tanstack/react-query';
 import { createContext, useContext, useMemo, type ReactNode } from 'react';
+import { sessionQueries } from './session.queries';
 
 const SessionContext = createContext<SessionDto | null>(null);
 const DEFAULT_PREFERENCES = preferencesSchema.parse({});
@@ -38,4 +40,10 @@ export function useCan(permission: Permission): boolean {
 /** Units and habits of the person; the defaults before anyone has signed in. */
 export function usePreferences(): Preferences {
   return useContext(SessionContext)?.user?.preferences ?? DEFAULT_PREFERENCES;
+}
+
+/** Fetches the session anew, after something in it was changed. */
+export function useRefreshSession(): () => Promise<void> {
+  const queryClient = useQueryClient();
+  return () => queryClient.invalidateQueries({ queryKey: sessionQueries.current().queryKey });
 }

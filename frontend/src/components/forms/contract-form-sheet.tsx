@@ -16,6 +16,8 @@ interface ContractFormSheetProps<Values> {
   cancelTo: string;
   /** Renders what is stored now, on a version conflict. */
   onReload?: () => void;
+  /** Said where the page stays after saving. */
+  doneText?: string;
   children: ReactNode;
 }
 
@@ -27,6 +29,7 @@ export function ContractFormSheet<Values extends object>({
   submitLabel,
   cancelTo,
   onReload,
+  doneText,
   children,
 }: ContractFormSheetProps<Values>) {
   const { form, submit, pending, problem } = contractForm;
@@ -51,6 +54,7 @@ export function ContractFormSheet<Values extends object>({
         <Link to={cancelTo} className={styles.cancel}>
           Cancel
         </Link>
+        <span role="status">{doneText}</span>
       </div>
     </Form>
   );

@@ -1,4 +1,4 @@
-import { signInSchema, type SignInInput } from '@stayledger/shared/contracts/auth';
+import { sessionSchema, signInSchema, type SignInInput } from '@stayledger/shared/contracts/auth';
 import { useMutation, useQuery, useQueryClient } from '@tanstack/react-query';
 import { useState, type FormEvent } from 'react';
 import { Navigate, useSearchParams } from 'react-router-dom';
@@ -75,11 +75,11 @@ export function SignInPage() {
 function useSignIn() {
   const queryClient = useQueryClient();
   return useMutation({
-    mutationFn: (input: SignInInput) => apiSend('POST', '/auth/sign-in', null, { body: input }),
-    onSuccess: async () => {
+    mutationFn: (input: SignInInput) => apiSend('POST', '/auth/sign-in', sessionSchema, { body: input }),
+    onSuccess: (session) => {
       // What an earlier person at this browser saw must not shine through.
       queryClient.removeQueries({ predicate: (query) => query.queryKey[0] !== 'session' });
-      await queryClient.invalidateQueries({ queryKey: sessionQueries.current().queryKey });
+      queryClient.setQueryData(sessionQueries.current().queryKey, session);
     },
   });
 }

@@ -8,7 +8,7 @@ import { RIG_TYPE_WORDS, USE_KIND_WORDS } from '../../features/vessels/vessel-wo
 import { vesselQueries } from '../../features/vessels/vessels.queries';
 import { useFormat } from '../../lib/formatting/use-format';
 import { useSession } from '../../lib/session';
-import styles from './vessel-layout.module.css';
+import styles from '../../components/page-tabs/page-tabs.module.css';
 
 /** Head of a vessel's pages; the tab below it gets the vessel through the outlet context (see use-vessel.ts). */
 export function VesselLayoutPage() {
