@@ -25,7 +25,8 @@ describe('damage per cycle', () => {
           const damageOf = damagePerCycle(curve);
           for (const at of [range, knee, knee * cutOffShare, knee * cutOffShare * 0.999]) {
             const expected = 1 / cyclesToFailure(curve, at);
-            if (expected === 0) expect(damageOf(at)).toBe(0);
+            // Near the smallest doubles digits are lost; there both must be as good as nothing.
+            if (expected < 1e-300) expect(damageOf(at)).toBeLessThan(1e-299);
             else expect(Math.abs(damageOf(at) / expected - 1)).toBeLessThan(1e-12);
           }
         },
