@@ -18,7 +18,13 @@ import { ReachInterceptor } from './database/reach.interceptor.js';
 import { FirmsModule } from './firms/firms.module.js';
 import { HealthModule } from './health/health.module.js';
 import { JobsModule } from './jobs/jobs.module.js';
+import { LedgerModule } from './ledger/ledger.module.js';
+import { LifeModule } from './life/life.module.js';
+import { LoadLogsModule } from './load-logs/load-logs.module.js';
+import { PartsModule } from './parts/parts.module.js';
+import { RigModule } from './rig/rig.module.js';
 import { UsersModule } from './users/users.module.js';
+import { VesselsModule } from './vessels/vessels.module.js';
 
 /** The API. What stands around every route, from the outside in, then the features. */
 @Module({
@@ -35,7 +41,13 @@ import { UsersModule } from './users/users.module.js';
     FirmsModule,
     HealthModule,
     JobsModule,
+    LedgerModule,
+    LifeModule,
+    LoadLogsModule,
+    PartsModule,
+    RigModule,
     UsersModule,
+    VesselsModule,
   ],
   providers: [
     { provide: APP_FILTER, useClass: ErrorFilter },

@@ -13,7 +13,7 @@ export class ConstructionsService {
     const rows: { data: ConstructionDto }[] = await this.em.execute(
       `select data from (
          select distinct on (id) name, data from construction
-          where firm_id is null or firm_id = any (?) order by id, version desc) newest
+          where firm_id is null or firm_id = any (array[?]::uuid[]) order by id, version desc) newest
         order by name`,
       [firmsOf(me)],
     );
@@ -23,7 +23,7 @@ export class ConstructionsService {
   /** The newest version to fit a part with; null when there is none the person may use. */
   async newest(me: Principal, id: string): Promise<ConstructionDto | null> {
     const [row]: { data: ConstructionDto }[] = await this.em.execute(
-      `select data from construction where id = ? and (firm_id is null or firm_id = any (?))
+      `select data from construction where id = ? and (firm_id is null or firm_id = any (array[?]::uuid[]))
         order by version desc limit 1`,
       [id, firmsOf(me)],
     );
@@ -37,6 +37,20 @@ export class ConstructionsService {
       [id, version],
     );
     return row.data;
+  }
+
+  /** Name and kind of wire of several at once, by `id@version`. */
+  async namesOf(
+    versions: readonly [string, number][],
+  ): Promise<Map<string, Pick<ConstructionDto, 'name' | 'kindOfWire'>>> {
+    if (versions.length === 0) return new Map();
+    const rows: { key: string; name: string; kind_of_wire: ConstructionDto['kindOfWire'] }[] =
+      await this.em.execute(
+        `select id || '@' || version as key, name, data ->> 'kindOfWire' as kind_of_wire
+           from construction where id || '@' || version = any (array[?]::text[])`,
+        [[...new Set(versions.map((version) => version.join('@')))]],
+      );
+    return new Map(rows.map((row) => [row.key, { name: row.name, kindOfWire: row.kind_of_wire }]));
   }
 }
 

@@ -74,7 +74,7 @@ export class VesselReach {
   private async rolesOn(me: Principal, vesselId: string): Promise<Role[]> {
     const rows: AccessRow[] = await this.em.execute(
       `select party, role from vessel_access
-        where vessel_id = ? and party = any (?) and (ends_at is null or ends_at > ?)`,
+        where vessel_id = ? and party = any (array[?]::text[]) and (ends_at is null or ends_at > ?)`,
       [vesselId, partiesOf(me.userId, me.capacities), this.clock.now()],
     );
     return rows.flatMap((row) => rolesThrough(me, row));
@@ -103,7 +103,7 @@ export function permittedVessels(
   return {
     sql: `exists (select 1 from vessel_access a
       where a.vessel_id = v.id and (a.ends_at is null or a.ends_at > ?)
-        and ((a.party = any (?) and a.role <> 'insurer') or (a.party = ? and a.role = any (?))))`,
+        and ((a.party = any (array[?]::text[]) and a.role <> 'insurer') or (a.party = ? and a.role = any (array[?]::text[]))))`,
     values: [now, firms, `user:${me.userId}`, roles],
   };
 }

@@ -1,5 +1,6 @@
 import {
   ConnectionException,
+  DriverException,
   OptimisticLockError,
   UniqueConstraintViolationException,
 } from '@mikro-orm/core';
@@ -50,7 +51,7 @@ export class ErrorFilter implements ExceptionFilter {
         retryAfterS: error.retryAfterS,
       };
     }
-    this.logger.error(textOf(exception), exception instanceof Error ? exception.stack : undefined);
+    this.logger.error(textOf(exception), framesOf(exception));
     const code: ErrorCode = 'internal';
     const message =
       'The service made a mistake; nothing was changed. If it happens again, quote the request id.';
@@ -142,9 +143,22 @@ function databaseIsAway(exception: unknown): boolean {
   );
 }
 
+/**
+ * What went wrong, without what somebody typed: database errors carry the statement with its values, so of those only
+ * PostgreSQL's own words are kept. A cause is told as well.
+ */
 function textOf(value: unknown): string {
   if (!(value instanceof Error)) return String(value);
-  // Driver errors append the statement with its values, which may be what somebody typed.
-  const text = `${value.name}: ${value.message.split('\n')[0]}`;
+  const words = value instanceof DriverException ? value.message.split(' - ').at(-1) : value.message;
+  const text = `${value.name}: ${words}`;
   return value.cause === undefined ? text : `${text} (${textOf(value.cause)})`;
+}
+
+/** The frames of a stack without its first lines, which repeat the message. */
+function framesOf(value: unknown): string | undefined {
+  if (!(value instanceof Error) || value.stack === undefined) return undefined;
+  return value.stack
+    .split('\n')
+    .filter((line) => /^ +at /.test(line))
+    .join('\n');
 }

@@ -1,0 +1,186 @@
+import { EntityManager } from '@mikro-orm/postgresql';
+import { Injectable } from '@nestjs/common';
+import type { FleetRowDto, vesselListQuerySchema } from '@stayledger/shared/contracts/vessels';
+import { z } from 'zod';
+import type { Principal } from '../auth/principal.js';
+import { Clock } from '../common/clock/clock.js';
+import { decodeCursor, toPage, type Page } from '../common/pagination/cursor.js';
+import { permittedVessels } from './vessel-reach.service.js';
+
+type Query = z.output<typeof vesselListQuerySchema>;
+
+/** Sort key, name in lower case, id: together unique, so no row is shown twice or left out between pages. */
+const cursorSchema = z.tuple([z.string().max(100), z.string().max(200), z.uuid()]);
+
+interface Row {
+  id: string;
+  name: string;
+  rig_type: FleetRowDto['rigType'];
+  home_port: string | null;
+  use_kind: FleetRowDto['useKind'];
+  parts: number;
+  overdue: number;
+  due: number;
+  assessed: number;
+  not_assessed: number;
+  calendar_only: number;
+  logs_waiting: number;
+  logged_hours: number;
+  last_log_at: string | null;
+  sort_key: string;
+  lower_name: string;
+}
+
+interface GoverningRow {
+  vessel_id: string;
+  part_id: string;
+  label: string;
+  replace_by_on: string;
+  rule: 'fatigue' | 'calendar';
+  allowance_used: number | null;
+  due: 'in-date' | 'due' | 'overdue';
+}
+
+/** Each sort as SQL: the key, its type for the cursor, and whether the largest comes first. */
+const SORTS: Record<Query['sort'], { key: string; type: string; descending: boolean }> = {
+  due: { key: `coalesce(s.due_on, 'infinity'::date)`, type: 'date', descending: false },
+  name: { key: 'lower(v.name)', type: 'text', descending: false },
+  'last-log': {
+    key: `coalesce(l.last_log_at, '-infinity'::timestamptz)`,
+    type: 'timestamptz',
+    descending: true,
+  },
+};
+
+const FILTERS: Record<Query['filter'], string> = {
+  all: 'true',
+  overdue: 's.overdue > 0',
+  due: 's.due > 0',
+  waiting: 'l.logs_waiting > 0',
+  'not-assessed': 's.not_assessed > 0',
+};
+
+/** The same rule as `toPartStandingDto`, in SQL: an allowance used up is overdue whatever the date. */
+const DUE_STATE = `case
+    when s.replace_by_on < v.today_on or coalesce(s.allowance_used, 0) >= 1 then 'overdue'
+    when s.replace_by_on <= (v.today_on + interval '12 months')::date then 'due'
+    else 'in-date' end`;
+
+/** The fleet, one row per vessel, from the standings that are kept per part: no ledger is added up here. */
+@Injectable()
+export class FleetList {
+  constructor(
+    private readonly em: EntityManager,
+    private readonly clock: Clock,
+  ) {}
+
+  async page(me: Principal, query: Query): Promise<Page<FleetRowDto>> {
+    const after = decodeCursor(query.cursor, cursorSchema);
+    const sort = SORTS[query.sort];
+    const now = this.clock.now();
+    const permitted = permittedVessels(me, 'vessels:read', now);
+    const rows: Row[] = await this.em.execute(
+      `with v as materialized (
+         select v.id, v.name, v.rig_type, v.home_port, v.use_kind, (?::timestamptz at time zone v.zone)::date as today_on
+           from vessel v
+          where v.archived_at is null and ${permitted.sql}
+            and (?::text is null or v.name ilike ? or v.home_port ilike ?)),
+       s as (
+         select s.vessel_id, count(*)::int as parts, min(s.replace_by_on) as due_on,
+                count(*) filter (where s.replace_by_on is not null and ${DUE_STATE} = 'overdue')::int as overdue,
+                count(*) filter (where s.replace_by_on is not null and ${DUE_STATE} = 'due')::int as due,
+                count(*) filter (where s.assessment = 'assessed')::int as assessed,
+                count(*) filter (where s.assessment = 'not-assessed')::int as not_assessed,
+                count(*) filter (where s.assessment = 'calendar-only')::int as calendar_only
+           from v join part_standing s on s.vessel_id = v.id
+           join fitted_part p on p.id = s.fitted_part_id and p.removed_on is null
+          group by s.vessel_id),
+       l as (
+         select g.vessel_id, count(*) filter (where g.state = 'counted')::int as logs_waiting,
+                coalesce(sum(g.logged_hours) filter (where g.state = 'posted'), 0) as logged_hours,
+                max(g.to_at) filter (where g.state in ('posted', 'counted')) as last_log_at
+           from v join load_log g on g.vessel_id = v.id group by g.vessel_id)
+       select v.id, v.name, v.rig_type, v.home_port, v.use_kind,
+              coalesce(s.parts, 0) as parts, coalesce(s.overdue, 0) as overdue, coalesce(s.due, 0) as due,
+              coalesce(s.assessed, 0) as assessed, coalesce(s.not_assessed, 0) as not_assessed,
+              coalesce(s.calendar_only, 0) as calendar_only, coalesce(l.logs_waiting, 0) as logs_waiting,
+              coalesce(l.logged_hours, 0) as logged_hours, l.last_log_at,
+              (${sort.key})::text as sort_key, lower(v.name) as lower_name
+         from v left join s on s.vessel_id = v.id left join l on l.vessel_id = v.id
+        where ${FILTERS[query.filter]}
+          and (?::text is null or ${sort.key} ${sort.descending ? '<' : '>'} ?::${sort.type}
+            or (${sort.key} = ?::${sort.type} and (lower(v.name), v.id) > (?::text, ?::uuid)))
+        order by ${sort.key} ${sort.descending ? 'desc' : 'asc'}, lower(v.name), v.id
+        limit ?`,
+      [
+        now,
+        ...permitted.values,
+        ...searchValues(query.q),
+        after?.[0] ?? null,
+        after?.[0] ?? null,
+        after?.[0] ?? null,
+        after?.[1] ?? null,
+        after?.[2] ?? null,
+        query.limit + 1,
+      ],
+    );
+    const page = toPage(rows, query.limit, (row) => [row.sort_key, row.lower_name, row.id]);
+    const governing = await this.governingOf(page.rows.map(({ id }) => id));
+    return {
+      items: page.rows.map((row) => toFleetRow(row, governing.get(row.id) ?? null)),
+      nextCursor: page.nextCursor,
+    };
+  }
+
+  /** The part whose date comes first, for the vessels of one page. */
+  private async governingOf(vesselIds: readonly string[]): Promise<Map<string, GoverningRow>> {
+    if (vesselIds.length === 0) return new Map();
+    const rows: GoverningRow[] = await this.em.execute(
+      `select distinct on (s.vessel_id) s.vessel_id, p.id as part_id, q.label, s.replace_by_on::text as replace_by_on,
+              s.governing_rule as rule, s.allowance_used, ${DUE_STATE} as due
+         from (select id, (?::timestamptz at time zone zone)::date as today_on from vessel where id = any (array[?]::uuid[])) v
+         join part_standing s on s.vessel_id = v.id
+         join fitted_part p on p.id = s.fitted_part_id and p.removed_on is null
+         join position q on q.id = p.position_id
+        where s.replace_by_on is not null and s.governing_rule is not null
+        order by s.vessel_id, s.replace_by_on, q.sort_order, q.label`,
+      [this.clock.now(), vesselIds],
+    );
+    return new Map(rows.map((row) => [row.vessel_id, row]));
+  }
+}
+
+function searchValues(q: string | undefined): [string | null, string, string] {
+  if (q === undefined || q === '') return [null, '', ''];
+  const pattern = `%${q.replace(/[\\%_]/g, '\\$&')}%`;
+  return [pattern, pattern, pattern];
+}
+
+function toFleetRow(row: Row, governing: GoverningRow | null): FleetRowDto {
+  return {
+    id: row.id,
+    name: row.name,
+    rigType: row.rig_type,
+    homePort: row.home_port,
+    useKind: row.use_kind,
+    governing: governing && {
+      partId: governing.part_id,
+      positionLabel: governing.label,
+      replaceByOn: governing.replace_by_on,
+      rule: governing.rule,
+      allowanceUsed: governing.allowance_used,
+      due: governing.due,
+    },
+    counts: {
+      parts: row.parts,
+      overdue: row.overdue,
+      due: row.due,
+      assessed: row.assessed,
+      notAssessed: row.not_assessed,
+      calendarOnly: row.calendar_only,
+      logsWaiting: row.logs_waiting,
+    },
+    loggedHours: row.logged_hours,
+    lastLogAt: row.last_log_at === null ? null : new Date(row.last_log_at).toISOString(),
+  };
+}
