@@ -1,4 +1,5 @@
 import { cycleTableOf } from './cycle-table.js';
+import { levelOf } from './level-of.js';
 import type { LoadSpectrum } from './load-spectrum.js';
 import { mergeAll } from './merge-spectra.js';
 
@@ -12,7 +13,7 @@ import { mergeAll } from './merge-spectra.js';
  */
 export function coarsenSpectrum(spectrum: LoadSpectrum, step: number): LoadSpectrum {
   const scale = spectrum.step > 0 ? spectrum.step : 1;
-  const level = (value: number) => Math.round((value * scale) / step) + 0;
+  const level = (value: number) => levelOf(value * scale, step) + 0;
   const days: LoadSpectrum['days'] = [];
   for (const { day, cycles } of spectrum.days) {
     const low: number[] = [];

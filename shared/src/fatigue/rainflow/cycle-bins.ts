@@ -1,136 +1,160 @@
 import { emptyCycleTable } from './cycle-table.js';
 import type { CycleTable } from './load-spectrum.js';
 
-const FIRST_SLOTS = 1024;
-const WORDS = 4;
+/** A tile is 4 by 4 bins: its counts are one cache line. */
+const TILE_BITS = 2;
+const TILE_MASK = (1 << TILE_BITS) - 1;
+const TILE_BINS = 1 << (2 * TILE_BITS);
+const FIRST_SLOTS = 256;
+/** Counts above this move to the table of doubles before they could run over. */
+const LARGEST_COUNT = 0xfffffff0;
 
 /**
- * Closed cycles being counted: a hash table from (low, high) to a number of cycles.
+ * Closed cycles being counted: from (low, high) to a number of cycles.
  *
- * Whole levels, the usual case, take 16 bytes a bin in one typed array, so that a bin is one cache line and the
- * garbage collector has nothing to walk. The first extreme that is no 32-bit whole number moves everything into
- * a table of doubles.
+ * Whole levels, the usual case, are kept in tiles of 4 by 4 neighbouring bins behind a hash table of the tiles.
+ * Cycles of one history lie close together, so the tables stay small enough for the nearer caches, where a hash
+ * table of single bins does not. The first extreme that is no 32-bit whole number moves everything into a plain
+ * hash table of doubles.
  */
 export class CycleBins {
-  private words = new Int32Array(FIRST_SLOTS * WORDS);
-  private counts = new Uint32Array(this.words.buffer);
-  private wide: WideBins | null;
   private slots = FIRST_SLOTS;
-  private used = 0;
+  /** Two words a slot: the tile's low and high, in tiles. */
+  private keys = new Int32Array(FIRST_SLOTS * 2);
+  /** Place of the slot's tile in `counts`, plus one; 0: empty. */
+  private places = new Int32Array(FIRST_SLOTS);
+  private counts = new Uint32Array((FIRST_SLOTS / 2) * TILE_BINS);
+  private tiles = 0;
+  private wide: WideBins | null;
 
   /** @param whole whether the extremes are whole levels; false: raw loads */
   constructor(private readonly whole: boolean) {
     this.wide = whole ? null : new WideBins();
   }
 
-  /** Number of distinct (low, high) pairs. */
-  get size(): number {
-    return this.wide === null ? this.used : this.wide.size;
+  /** What memory grows with: room for this many distinct (low, high) pairs is taken. */
+  get held(): number {
+    return this.wide === null ? this.tiles * TILE_BINS : this.wide.size;
   }
 
-  /** Adds `cycles` cycles between two extremes. */
-  add(low: number, high: number, cycles = 1): void {
+  /** Adds one cycle between two extremes. */
+  add(low: number, high: number): void {
     const lowWord = low | 0;
     const highWord = high | 0;
-    if (this.wide !== null || lowWord !== low || highWord !== high || cycles > 0xffff) {
-      this.addWide(low, high, cycles);
+    if (this.wide !== null || lowWord !== low || highWord !== high) {
+      this.widen().add(low, high, 1);
       return;
     }
-    const words = this.words;
+    const tileLow = lowWord >> TILE_BITS;
+    const tileHigh = highWord >> TILE_BITS;
+    const { keys, places } = this;
     const mask = this.slots - 1;
-    let slot = (Math.imul(lowWord, 0x9e3779b1) ^ Math.imul(highWord, 0x85ebca6b)) >>> 0;
-    slot = (slot ^ (slot >>> 15)) & mask;
-    for (;;) {
-      const at = slot << 2;
-      const count = this.counts[at + 2];
-      if (count === 0) {
-        words[at] = lowWord;
-        words[at + 1] = highWord;
-        this.counts[at + 2] = cycles;
-        if (++this.used * 2 > this.slots) this.grow();
-        return;
-      }
-      if (words[at] === lowWord && words[at + 1] === highWord) {
-        if (count > 0xfff00000) this.addWide(low, high, cycles);
-        else this.counts[at + 2] = count + cycles;
-        return;
-      }
+    let slot = hashOf(tileLow, tileHigh) & mask;
+    let place = places[slot];
+    while (place !== 0 && (keys[slot * 2] !== tileLow || keys[slot * 2 + 1] !== tileHigh)) {
       slot = (slot + 1) & mask;
+      place = places[slot];
     }
+    if (place === 0) place = this.newTile(slot, tileLow, tileHigh);
+    const bin = (place - 1) * TILE_BINS + ((lowWord & TILE_MASK) << TILE_BITS) + (highWord & TILE_MASK);
+    if (++this.counts[bin] > LARGEST_COUNT) this.widen();
   }
 
   /** The cycles counted so far, sorted. */
   table(): CycleTable {
     if (this.wide !== null) return this.wide.table();
-    const { words, counts, used } = this;
-    if (used === 0) return emptyCycleTable();
-    const low = new Int32Array(used);
-    const high = new Int32Array(used);
-    const count = new Uint32Array(used);
+    const { counts, tiles } = this;
+    let size = 0;
+    for (let bin = 0; bin < tiles * TILE_BINS; bin++) if (counts[bin] > 0) size++;
+    if (size === 0) return emptyCycleTable();
+    const low = new Float64Array(size);
+    const high = new Float64Array(size);
+    const count = new Float64Array(size);
     let n = 0;
-    for (let at = 0; n < used; at += WORDS) {
-      if (counts[at + 2] === 0) continue;
-      low[n] = words[at];
-      high[n] = words[at + 1];
-      count[n++] = counts[at + 2];
-    }
-    return sorted(low, high, count);
+    this.forEach((binLow, binHigh, cycles) => {
+      low[n] = binLow;
+      high[n] = binHigh;
+      count[n++] = cycles;
+    });
+    return sortedTable(low, high, count);
   }
 
   /** Forgets everything, keeping the memory for the next use. */
   clear(): void {
-    this.words.fill(0);
-    this.used = 0;
+    this.places.fill(0);
+    this.counts.fill(0, 0, this.tiles * TILE_BINS);
+    this.tiles = 0;
     this.wide = this.whole ? null : new WideBins();
   }
 
-  private addWide(low: number, high: number, cycles: number): void {
-    if (this.wide === null) {
-      this.wide = new WideBins();
-      for (let at = 0; at < this.words.length; at += WORDS) {
-        const count = this.counts[at + 2];
-        if (count > 0) this.wide.add(this.words[at], this.words[at + 1], count);
+  private forEach(visit: (low: number, high: number, cycles: number) => void): void {
+    const { keys, places, counts } = this;
+    for (let slot = 0; slot < this.slots; slot++) {
+      if (places[slot] === 0) continue;
+      const low = keys[slot * 2] << TILE_BITS;
+      const high = keys[slot * 2 + 1] << TILE_BITS;
+      const first = (places[slot] - 1) * TILE_BINS;
+      for (let bin = 0; bin < TILE_BINS; bin++) {
+        const cycles = counts[first + bin];
+        if (cycles > 0) visit(low + (bin >> TILE_BITS), high + (bin & TILE_MASK), cycles);
       }
-      this.words.fill(0);
-      this.used = 0;
     }
-    this.wide.add(low, high, cycles);
+  }
+
+  private newTile(slot: number, tileLow: number, tileHigh: number): number {
+    this.keys[slot * 2] = tileLow;
+    this.keys[slot * 2 + 1] = tileHigh;
+    const place = ++this.tiles;
+    this.places[slot] = place;
+    if (this.tiles * 2 >= this.slots) this.grow();
+    return place;
   }
 
   private grow(): void {
-    const { words: oldWords, counts: oldCounts } = this;
-    this.slots *= 2;
-    this.words = new Int32Array(this.slots * WORDS);
-    this.counts = new Uint32Array(this.words.buffer);
-    this.used = 0;
-    for (let at = 0; at < oldWords.length; at += WORDS) {
-      const count = oldCounts[at + 2];
-      if (count > 0) this.put(oldWords[at], oldWords[at + 1], count);
+    const { keys, places, slots } = this;
+    this.slots = slots * 2;
+    this.keys = new Int32Array(this.slots * 2);
+    this.places = new Int32Array(this.slots);
+    const counts = new Uint32Array((this.slots / 2) * TILE_BINS);
+    counts.set(this.counts);
+    this.counts = counts;
+    const mask = this.slots - 1;
+    for (let old = 0; old < slots; old++) {
+      if (places[old] === 0) continue;
+      let slot = hashOf(keys[old * 2], keys[old * 2 + 1]) & mask;
+      while (this.places[slot] !== 0) slot = (slot + 1) & mask;
+      this.keys[slot * 2] = keys[old * 2];
+      this.keys[slot * 2 + 1] = keys[old * 2 + 1];
+      this.places[slot] = places[old];
     }
   }
 
-  private put(low: number, high: number, count: number): void {
-    const mask = this.slots - 1;
-    let slot = (Math.imul(low, 0x9e3779b1) ^ Math.imul(high, 0x85ebca6b)) >>> 0;
-    slot = (slot ^ (slot >>> 15)) & mask;
-    while (this.counts[(slot << 2) + 2] !== 0) slot = (slot + 1) & mask;
-    const at = slot << 2;
-    this.words[at] = low;
-    this.words[at + 1] = high;
-    this.counts[at + 2] = count;
-    this.used++;
+  /** Goes over to the table of doubles. */
+  private widen(): WideBins {
+    if (this.wide !== null) return this.wide;
+    const wide = new WideBins();
+    this.forEach((low, high, cycles) => wide.add(low, high, cycles));
+    this.clear();
+    this.wide = wide;
+    return wide;
   }
 }
 
-/** The same table for any finite doubles. */
+/** Multiplicative hash: the high bits of the product depend on all bits of both. */
+function hashOf(tileLow: number, tileHigh: number): number {
+  const mixed = Math.imul(Math.imul(tileLow, 0x85ebca6b) + tileHigh, 0x9e3779b1);
+  return mixed ^ (mixed >>> 16);
+}
+
+/** From any two finite doubles to a number of cycles. */
 class WideBins {
   size = 0;
-  private slots = FIRST_SLOTS;
-  private low = new Float64Array(FIRST_SLOTS);
-  private high = new Float64Array(FIRST_SLOTS);
-  private count = new Float64Array(FIRST_SLOTS);
+  private slots = 1024;
+  private low = new Float64Array(1024);
+  private high = new Float64Array(1024);
+  private count = new Float64Array(1024);
   private readonly bits = new Float64Array(2);
-  private readonly hashed = new Int32Array(this.bits.buffer);
+  private readonly words = new Int32Array(this.bits.buffer);
 
   add(low: number, high: number, cycles: number): void {
     const mask = this.slots - 1;
@@ -159,15 +183,15 @@ class WideBins {
       high[n] = this.high[slot];
       count[n++] = this.count[slot];
     }
-    return sorted(low, high, count);
+    return sortedTable(low, high, count);
   }
 
   private hash(low: number, high: number): number {
     // -0 and 0 are one load but two bit patterns.
     this.bits[0] = low + 0;
     this.bits[1] = high + 0;
-    let mixed = Math.imul(this.hashed[0] ^ Math.imul(this.hashed[1], 0x27d4eb2f), 0x9e3779b1);
-    mixed ^= Math.imul(this.hashed[2] ^ Math.imul(this.hashed[3], 0x165667b1), 0x85ebca6b);
+    let mixed = Math.imul(this.words[0] ^ Math.imul(this.words[1], 0x27d4eb2f), 0x9e3779b1);
+    mixed ^= Math.imul(this.words[2] ^ Math.imul(this.words[3], 0x165667b1), 0x85ebca6b);
     mixed ^= mixed >>> 15;
     mixed = Math.imul(mixed, 0x2c1b3c6d);
     return (mixed ^ (mixed >>> 13)) >>> 0;
@@ -186,21 +210,13 @@ class WideBins {
   }
 }
 
-/** Sorts by (low, high): first by one typed-array sort of the lows with their places, then within equal lows. */
-function sorted(
-  low: Int32Array | Float64Array,
-  high: Int32Array | Float64Array,
-  count: Uint32Array | Float64Array,
-): CycleTable {
+/** Distinct cycles in any order, sorted by (low, high). */
+function sortedTable(low: Float64Array, high: Float64Array, count: Float64Array): CycleTable {
   const size = low.length;
   const order = new Uint32Array(size);
   for (let i = 0; i < size; i++) order[i] = i;
   order.sort((a, b) => low[a] - low[b] || high[a] - high[b]);
-  const table = {
-    low: new Float64Array(size),
-    high: new Float64Array(size),
-    count: new Float64Array(size),
-  };
+  const table = { low: new Float64Array(size), high: new Float64Array(size), count: new Float64Array(size) };
   for (let n = 0; n < size; n++) {
     const i = order[n];
     table.low[n] = low[i] + 0;

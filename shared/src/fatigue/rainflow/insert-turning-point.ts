@@ -1,4 +1,5 @@
 import type { LoadSpectrum } from './load-spectrum.js';
+import { levelOf } from './level-of.js';
 import { mergeSpectra } from './merge-spectra.js';
 
 /**
@@ -14,7 +15,7 @@ export function insertTurningPoint(
   point: { load: number; day: number },
 ): LoadSpectrum {
   const { step } = spectrum;
-  const level = (step > 0 ? Math.round(point.load / step) : point.load) + 0;
+  const level = levelOf(point.load, step) + 0;
   return mergeSpectra(spectrum, {
     step,
     days: [],

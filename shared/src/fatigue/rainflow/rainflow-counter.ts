@@ -1,6 +1,10 @@
 import { CycleBins } from './cycle-bins.js';
 import type { LoadSpectrum } from './load-spectrum.js';
+import { levelOf } from './level-of.js';
 import { mergeAll } from './merge-spectra.js';
+
+/** Samples handled at once; bounds the room needed on the stack. */
+const PART = 4096;
 
 /** A counter's whole state as plain data, for storing and carrying on later (`RainflowCounter.fromState`). */
 export interface RainflowState {
@@ -19,8 +23,10 @@ export interface RainflowState {
 export class RainflowCounter {
   readonly step: number;
   private readonly bins = new Map<number, CycleBins>();
-  private stack = new Float64Array(64);
-  private stackDay = new Int32Array(64);
+  private binsDay = NaN;
+  private dayBins: CycleBins;
+  private stack = new Float64Array(PART + 64);
+  private stackDay = new Int32Array(PART + 64);
   /** Turning points known to be final, on the stack. */
   private top = 0;
   /** The running extreme as a load (not a level); NaN before the first sample. */
@@ -39,6 +45,7 @@ export class RainflowCounter {
       throw new RangeError(`the step must be 0 or a positive number, not ${options.step}`);
     }
     this.step = options.step;
+    this.dayBins = new CycleBins(options.step > 0);
   }
 
   /** A counter that carries on where another one stopped. */
@@ -61,7 +68,7 @@ export class RainflowCounter {
   /** Points on the residue now, and distinct cycles held: what the counter's memory grows with. */
   get held(): { residue: number; cycles: number } {
     let cycles = 0;
-    for (const bins of this.bins.values()) cycles += bins.size;
+    for (const bins of this.bins.values()) cycles += bins.held;
     if (this.before !== null) for (const day of this.before.days) cycles += day.cycles.count.length;
     return { residue: this.top + 1 + (this.before?.residue.length ?? 0), cycles };
   }
@@ -75,63 +82,133 @@ export class RainflowCounter {
    * @throws RangeError when a load is infinite
    */
   push(block: Float64Array, n: number, day: number): void {
-    const step = this.step;
-    let { last, direction } = this;
-    let i = 0;
-    let missing = 0;
-    while (i < n && direction === 0) {
-      const load = block[i++];
-      if (load !== load) {
-        missing++;
-      } else if (last !== last) {
-        last = load;
+    for (let from = 0; from < n; from += PART) {
+      const to = Math.min(n, from + PART);
+      const begun = this.direction === 0 ? this.findDirection(block, from, to, day) : from;
+      if (begun < to) this.run(block, begun, to, day);
+    }
+    if (this.last === Infinity || this.last === -Infinity) throw infiniteLoad();
+  }
+
+  /** Reads until the level changes for the first time. @returns the first sample not read */
+  private findDirection(block: Float64Array, from: number, to: number, day: number): number {
+    const { step } = this;
+    for (let i = from; i < to; i++) {
+      const load = block[i];
+      if (load !== load) continue;
+      this.counted++;
+      if (this.last !== this.last) {
+        this.last = load;
         this.lastDay = day;
         this.turns = 1;
-      } else {
-        const level = step > 0 ? Math.round(load / step) : load;
-        const lastLevel = step > 0 ? Math.round(last / step) : last;
-        if (level !== lastLevel) {
-          this.place(lastLevel, this.lastDay);
-          direction = level > lastLevel ? 1 : -1;
+        continue;
+      }
+      const level = levelOf(load, step);
+      const lastLevel = levelOf(this.last, step);
+      if (level === lastLevel) continue;
+      if (lastLevel - lastLevel !== 0) throw infiniteLoad();
+      this.stack[0] = lastLevel;
+      this.stackDay[0] = this.lastDay;
+      this.top = 1;
+      this.direction = level > lastLevel ? 1 : -1;
+      this.last = load;
+      this.lastDay = day;
+      this.turns = 2;
+      return i + 1;
+    }
+    return to;
+  }
+
+  /**
+   * The hot loop: turning points and four-point rule over samples in which the direction is known. All state is
+   * in locals and written back once. The usual path, a sample that carries on, is one comparison; loads are
+   * rounded to the grid only where they turn, which is exact because rounding keeps their order.
+   */
+  private run(block: Float64Array, from: number, to: number, day: number): void {
+    this.makeRoom(to - from);
+    const { step, stack, stackDay } = this;
+    let { top, last } = this;
+    let rising = this.direction > 0;
+    let turns = 0;
+    let missing = 0;
+    // The running extreme keeps its earlier day until its level changes.
+    let lastDay = this.lastDay;
+    let oldLevel = levelOf(last, step);
+    let i = from;
+    while (i < to) {
+      let load = block[i++];
+      if (rising) {
+        while (load >= last && i < to) {
           last = load;
-          this.lastDay = day;
-          this.turns = 2;
+          load = block[i++];
+        }
+        if (load >= last) {
+          last = load;
+          break;
+        }
+        if (load !== load) {
+          missing++;
+          continue;
+        }
+        const level = levelOf(last, step);
+        if (levelOf(load, step) === level) continue;
+        if (level !== oldLevel) lastDay = day;
+        if (level - level !== 0) throw infiniteLoad();
+        stack[top] = level;
+        stackDay[top++] = lastDay;
+        while (top >= 4) {
+          const high = stack[top - 3];
+          const low = stack[top - 2];
+          // Later counts as higher: ties close on the way up.
+          if (low < stack[top - 4] || high > level) break;
+          this.count(stackDay[top - 3], low, high);
+          stack[top - 3] = level;
+          stackDay[top - 3] = lastDay;
+          top -= 2;
+        }
+      } else {
+        while (load <= last && i < to) {
+          last = load;
+          load = block[i++];
+        }
+        if (load <= last) {
+          last = load;
+          break;
+        }
+        if (load !== load) {
+          missing++;
+          continue;
+        }
+        const level = levelOf(last, step);
+        if (levelOf(load, step) === level) continue;
+        if (level !== oldLevel) lastDay = day;
+        if (level - level !== 0) throw infiniteLoad();
+        stack[top] = level;
+        stackDay[top++] = lastDay;
+        while (top >= 4) {
+          const low = stack[top - 3];
+          const high = stack[top - 2];
+          // Later counts as higher: ties stay open on the way down.
+          if (high >= stack[top - 4] || low <= level) break;
+          this.count(stackDay[top - 2], low, high);
+          stack[top - 3] = level;
+          stackDay[top - 3] = lastDay;
+          top -= 2;
         }
       }
-    }
-    // The running extreme keeps its earlier day until the level changes.
-    let lastDay = this.lastDay;
-    let oldLevel = step > 0 ? Math.round(last / step) : last;
-    for (; i < n; i++) {
-      const load = block[i];
-      if (direction > 0 ? load >= last : load <= last) {
-        last = load;
-        continue;
-      }
-      if (load !== load) {
-        missing++;
-        continue;
-      }
-      const level = step > 0 ? Math.round(load / step) : load;
-      const lastLevel = step > 0 ? Math.round(last / step) : last;
-      if (level === lastLevel) continue;
-      if (lastLevel !== oldLevel) lastDay = day;
-      this.place(lastLevel, lastDay);
-      this.turns++;
-      direction = -direction;
+      turns++;
+      rising = !rising;
       last = load;
       lastDay = day;
       oldLevel = NaN;
     }
-    if (oldLevel === oldLevel || n > 0) {
-      const lastLevel = step > 0 ? Math.round(last / step) : last;
-      if (lastLevel !== oldLevel && lastLevel === lastLevel) lastDay = day;
-    }
-    if (last === Infinity || last === -Infinity) throw new RangeError('a load is infinite');
+    if (turns === 0 && levelOf(last, step) !== oldLevel) lastDay = day;
+    this.top = top;
     this.last = last;
     this.lastDay = lastDay;
-    this.direction = direction;
-    this.counted += n - missing;
+    this.direction = rising ? 1 : -1;
+    this.turns += turns;
+    this.counted += to - from - missing;
   }
 
   /** The load spectrum of everything so far. The counter can carry on afterwards. */
@@ -148,7 +225,7 @@ export class RainflowCounter {
     const residue = this.stack.slice(0, size);
     const residueDay = this.stackDay.slice(0, size);
     if (size > this.top) {
-      residue[size - 1] = this.step > 0 ? Math.round(this.last / this.step) : this.last;
+      residue[size - 1] = levelOf(this.last, this.step);
       residueDay[size - 1] = this.lastDay;
     }
     for (let i = 0; i < size; i++) residue[i] += 0;
@@ -172,47 +249,35 @@ export class RainflowCounter {
     return size === 0 ? open : { ...mergeAll([open, end]), turningPoints: this.turns };
   }
 
-  private place(level: number, day: number): void {
-    if (level - level !== 0) throw new RangeError('a load is infinite');
-    if (this.top + 1 >= this.stack.length) this.growStack();
-    const { stack, stackDay } = this;
-    let top = this.top;
-    stack[top] = level;
-    stackDay[top++] = day;
-    while (top >= 4) {
-      const a = stack[top - 4];
-      const b = stack[top - 3];
-      const c = stack[top - 2];
-      const d = stack[top - 1];
-      if (b > c) {
-        if (c < a || b > d) break;
-        this.count(stackDay[top - 3], c, b);
-      } else {
-        if (c >= a || b <= d) break;
-        this.count(stackDay[top - 2], b, c);
-      }
-      stack[top - 3] = d;
-      stackDay[top - 3] = stackDay[top - 1];
-      top -= 2;
-    }
-    this.top = top;
+  private count(day: number, low: number, high: number): void {
+    if (day !== this.binsDay) this.useBins(day);
+    this.dayBins.add(low, high);
   }
 
-  private count(day: number, low: number, high: number): void {
+  private useBins(day: number): void {
     let bins = this.bins.get(day);
     if (bins === undefined) {
       bins = new CycleBins(this.step > 0);
       this.bins.set(day, bins);
     }
-    bins.add(low, high);
+    this.binsDay = day;
+    this.dayBins = bins;
   }
 
-  private growStack(): void {
-    const stack = new Float64Array(this.stack.length * 2);
+  /** Room on the stack for one more turning point a sample. */
+  private makeRoom(samples: number): void {
+    const needed = this.top + samples + 1;
+    if (needed <= this.stack.length) return;
+    const size = Math.max(needed, this.stack.length * 2);
+    const stack = new Float64Array(size);
     stack.set(this.stack);
     this.stack = stack;
-    const days = new Int32Array(this.stackDay.length * 2);
+    const days = new Int32Array(size);
     days.set(this.stackDay);
     this.stackDay = days;
   }
+}
+
+function infiniteLoad(): RangeError {
+  return new RangeError('a load is infinite');
 }
