@@ -47,7 +47,7 @@ export function configureApp(
   app.use(securityHeaders(env.PUBLIC_URL?.startsWith('https:') ?? false));
   app.use('/api', neverStored, ...sessions.handlers, refuseCrossSite(env.PUBLIC_URL));
   app.use(UPLOADS_PATH, app.get(UploadsHandler).handle);
-  app.use('/api', jsonOnly(['/uploads']), express.json({ limit: BODY_LIMIT }));
+  app.use('/api', jsonOnly, express.json({ limit: BODY_LIMIT }));
   mountOpenApi(app);
   app.use(webApp(webAppFolder));
   return app;

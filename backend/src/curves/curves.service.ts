@@ -14,7 +14,7 @@ export class CurvesService {
     const rows: { data: CurveDto }[] = await this.em.execute(
       `select data from (
          select distinct on (id) name, data from curve
-          where firm_id is null or firm_id = any (?) order by id, version desc) newest
+          where firm_id is null or firm_id = any (array[?]::uuid[]) order by id, version desc) newest
         order by name`,
       [firmsOf(me)],
     );
@@ -25,7 +25,7 @@ export class CurvesService {
   async get(me: Principal, id: string, version?: number): Promise<CurveDto> {
     const [row]: { data: CurveDto }[] = await this.em.execute(
       `select data from curve
-        where id = ? and (firm_id is null or firm_id = any (?)) and (?::int is null or version = ?::int)
+        where id = ? and (firm_id is null or firm_id = any (array[?]::uuid[])) and (?::int is null or version = ?::int)
         order by version desc limit 1`,
       [id, firmsOf(me), version ?? null, version ?? null],
     );
