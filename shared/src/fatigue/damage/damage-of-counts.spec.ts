@@ -145,6 +145,15 @@ describe("properties of Miner's sum", () => {
     );
   });
 
+  it('does not depend on the order where even a compensated sum would', () => {
+    // Terms 1, 2^-53 and four of 2^-107: added in this order the small ones are lost one by one against 2^-53 and the
+    // sum rounds down to 1; added from below they tip it to 1 + 2^-52, which is the exact sum rounded.
+    const curve: Curve = { segments: [{ above: 0, m: 1, log10a: 0 }] };
+    const list = counted([1, 2 ** -53, ...new Array<number>(4).fill(2 ** -107)].map((range) => [range, 1]));
+    expect(damageOfCounts(list, { factor: 1, curve })).toBe(1 + 2 ** -52);
+    expect(damageOfCounts(list.reverse(), { factor: 1, curve })).toBe(1 + 2 ** -52);
+  });
+
   it('grows by k^m when all loads are scaled by k on one slope', () => {
     fc.assert(
       fc.property(
