@@ -8,8 +8,10 @@ import { MIGRATIONS } from '../database/migrations.js';
 import { ormOptions } from '../database/mikro-orm.config.js';
 import { REFERENCE_FILES, seedReferenceData } from '../database/seed/reference-data.js';
 
-const OWNER = 'stayledger_owner';
-const APP = 'stayledger_app';
+/** The role the migrations grant to. Tests log in as a member of it, so that nobody else's password is changed. */
+const APP_GROUP = 'stayledger_app';
+const OWNER = 'stayledger_test_owner';
+const APP = 'stayledger_test_app';
 /** Any number, the same in every worker: one of them makes the template while the others wait. */
 const TEMPLATE_LOCK = 7_302_031;
 
@@ -33,7 +35,7 @@ function adminUrl(): string {
   );
 }
 
-/** On a throw-away cluster both roles carry the administrator's password; the browser tests count on it too. */
+/** On a throw-away cluster the roles of the tests carry the administrator's password. */
 function rolePassword(): string {
   return decodeURIComponent(new URL(adminUrl()).password);
 }
@@ -50,7 +52,7 @@ function urlOf(database: string, role?: string): string {
 
 /** Named by what is in it, so a changed migration or curve gets a new template and an unchanged one is used again. */
 function templateName(): string {
-  const hash = createHash('sha256');
+  const hash = createHash('sha256').update(OWNER);
   for (const migration of MIGRATIONS) {
     hash.update(readFileSync(join(__dirname, '../database/migrations', `${migration.name}.ts`)));
   }
@@ -58,12 +60,9 @@ function templateName(): string {
   return `stayledger_template_${hash.digest('hex').slice(0, 12)}`;
 }
 
-async function ensureRole(client: Client, role: string): Promise<void> {
+async function ensureRole(client: Client, role: string, options: string): Promise<void> {
   const { rowCount } = await client.query('select 1 from pg_roles where rolname = $1', [role]);
-  const verb = rowCount ? 'alter' : 'create';
-  await client.query(
-    `${verb} role ${role} login nosuperuser password ${client.escapeLiteral(rolePassword())}`,
-  );
+  if (!rowCount) await client.query(`create role ${role} nosuperuser ${options}`);
 }
 
 async function ensureTemplate(client: Client, template: string): Promise<void> {
@@ -73,8 +72,10 @@ async function ensureTemplate(client: Client, template: string): Promise<void> {
     if (found.rows[0]?.datistemplate) return;
     // A half-made one, left by a run that was stopped.
     await client.query(`drop database if exists ${template} with (force)`);
-    await ensureRole(client, OWNER);
-    await ensureRole(client, APP);
+    const password = client.escapeLiteral(rolePassword());
+    await ensureRole(client, APP_GROUP, 'nologin');
+    await ensureRole(client, OWNER, `login password ${password}`);
+    await ensureRole(client, APP, `login password ${password} in role ${APP_GROUP}`);
     await client.query(`create database ${template} owner ${OWNER}`);
     const orm = await MikroORM.init(ormOptions(urlOf(template, OWNER)));
     try {
