@@ -69,7 +69,7 @@ export function AllowanceChart({ life, zone }: { life: PartLifeDto; zone: string
       yMin={0}
       yMax={showsRule ? Math.max(1.1, highest * 1.05) : 'auto'}
       formatX={(x) => (typeof x === 'string' ? monthOf(format.day(x)) : '')}
-      formatY={(y) => format.percent(y)}
+      formatY={(y) => format.percent(y, highest < 0.05 ? 1 : 0)}
       markers={markers}
       xTicks={fewDays(rows.map((row) => row.on))}
       rows={rows}

@@ -59,11 +59,7 @@ export function CyclesChart({ life }: { life: PartLifeDto }) {
       xTitle="Cycles"
       yTitle={`Range${unit}`}
       formatX={(x) => format.scientific(Number(x), 1)}
-      formatY={(y) => format.significant(y, 2)}
-      xTicks={powersOfTen([
-        ...curve.map((point) => point.cyclesToFailure),
-        ...counted.map((bin) => bin.cycles),
-      ])}
+      formatY={(y) => format.number(y, y < 1 ? 2 : 0)}
       rows={counted}
       columns={columns}
       rowKey={(bin) => String(bin.rangeLow)}
@@ -75,15 +71,4 @@ export function CyclesChart({ life }: { life: PartLifeDto }) {
 
 function middle(bin: Bin): number {
   return (bin.rangeLow + bin.rangeHigh) / 2;
-}
-
-/** Every second or third power of ten, so that labels keep apart. */
-function powersOfTen(values: readonly number[]): number[] {
-  if (values.length === 0) return [];
-  const low = Math.floor(Math.log10(Math.min(...values)));
-  const high = Math.ceil(Math.log10(Math.max(...values)));
-  const step = Math.max(1, Math.ceil((high - low) / 5));
-  const ticks: number[] = [];
-  for (let power = low; power <= high; power += step) ticks.push(10 ** power);
-  return ticks;
 }

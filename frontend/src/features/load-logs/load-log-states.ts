@@ -11,9 +11,8 @@ interface StateWords {
 
 const WORDS: Record<LoadLogState, StateWords> = {
   receiving: {
-    word: 'Upload not finished',
-    meaning:
-      'The file is not here yet. The upload goes on where it stopped when the same file is chosen again.',
+    word: 'Being received',
+    meaning: 'The file is not here in full yet.',
     moving: true,
   },
   received: {

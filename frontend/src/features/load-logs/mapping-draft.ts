@@ -114,7 +114,7 @@ export function draftOfMapping(mapping: LogMapping, allColumns: readonly string[
         column,
         positionId: channel?.positionId ?? '',
         unit: channel?.unit ?? '',
-        origin: channel ? 'remembered' : 'none',
+        origin: 'none',
         isLikely: true,
       };
     }),

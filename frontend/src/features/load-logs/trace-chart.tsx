@@ -35,6 +35,8 @@ export function TraceChart({ trace, findings, zone, fromMs, toMs, cursorMs, onCu
     const high = format.forceFromKn(trace.maxKn ?? 0);
     return loadTicks(low, high > low ? high : low + 1);
   }, [trace, format]);
+  const step = yTicks.length > 1 ? yTicks[1] - yTicks[0] : 1;
+  const tickDecimals = Math.max(0, -Math.floor(Math.log10(step)));
   const lowKn = format.forceToKn(yTicks[0]);
   const highKn = format.forceToKn(yTicks[yTicks.length - 1]);
   const scale = { fromMs, toMs, lowKn, highKn, width, height: PLOT_HEIGHT };
@@ -117,7 +119,7 @@ export function TraceChart({ trace, findings, zone, fromMs, toMs, cursorMs, onCu
               <g key={tick} transform={`translate(0 ${yOf(format.forceToKn(tick)).toFixed(1)})`}>
                 <line className={styles.grid} x2={width} />
                 <text className={styles.tick} x={-8} dy="0.32em" textAnchor="end">
-                  {format.significant(tick, 3)}
+                  {format.number(tick, tickDecimals)}
                 </text>
               </g>
             ))}

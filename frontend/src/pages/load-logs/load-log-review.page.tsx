@@ -82,9 +82,18 @@ function FailedLog({ log, vessel, mayUpload }: { log: LoadLogDto; vessel: Vessel
         <p>{log.failure?.message ?? 'The file could not be read.'}</p>
       </Attention>
       {log.findings.length > 0 && <FindingList findings={log.findings} zone={vessel.zone} />}
-      {mayUpload && <Recount log={log} vessel={vessel} />}
+      {mayUpload && mayBeReadAgain(log) && (
+        <div className={styles.again}>
+          <Recount log={log} vessel={vessel} />
+        </div>
+      )}
     </>
   );
+}
+
+/** A file that came in full and is a table can be read in another way; no mapping mends any other. */
+function mayBeReadAgain(log: LoadLogDto): boolean {
+  return log.receivedBytes === log.sizeBytes && log.failure?.code !== 'not-a-table';
 }
 
 function Recount({ log, vessel }: { log: LoadLogDto; vessel: VesselDto }) {

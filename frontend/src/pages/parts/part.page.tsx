@@ -4,6 +4,7 @@ import type { VesselDto } from '@stayledger/shared/contracts/vessels';
 import { useQuery } from '@tanstack/react-query';
 import { Link, useParams } from 'react-router-dom';
 import { paths } from '../../app/paths';
+import { Cautions } from '../../components/cautions/cautions';
 import { QueryView } from '../../components/feedback/query-view';
 import { PageHeading } from '../../components/page-heading/page-heading';
 import { PartMark } from '../../components/part-mark/part-mark';
@@ -154,6 +155,7 @@ function PartAccount({ life, part, vessel }: { life: PartLifeDto; part: FittedPa
         <h2 id="working">The working</h2>
         <Working steps={life.working} />
       </section>
+      <Cautions plain={isOwnerOnly} />
     </>
   );
 }
