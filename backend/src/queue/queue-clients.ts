@@ -1,5 +1,4 @@
 import { Redis, type RedisOptions } from 'ioredis';
-import { readEnv } from '../config/env.js';
 import { createEmbeddedRedis } from './embedded-redis.js';
 
 /** The three connections a Bull queue asks for: commands, events, and the one that waits for work. */
@@ -37,22 +36,4 @@ export class QueueClients {
   disconnect(): void {
     for (const client of this.#clients.splice(0)) client.disconnect();
   }
-}
-
-let processClients: QueueClients | undefined;
-
-/** The connections of this process, chosen by REDIS_URL. */
-export function queueClients(): QueueClients {
-  processClients ??= new QueueClients(readEnv().REDIS_URL);
-  return processClients;
-}
-
-/** Bull's `createClient` for this process. */
-export function createQueueClient(type: QueueClientType, options?: RedisOptions): Redis {
-  return queueClients().create(type, options);
-}
-
-/** Ends the queue connections of this process; call it after the queues were closed. */
-export function disconnectQueueClients(): void {
-  processClients?.disconnect();
 }
