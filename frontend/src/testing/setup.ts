@@ -1,6 +1,9 @@
 import '@stayledger/shared/contracts/without-eval';
-import { cleanup } from '@testing-library/react';
+import { cleanup, configure } from '@testing-library/react';
 import { afterEach } from 'vitest';
+
+// A page comes in a chunk of its own and a busy machine takes its time; nothing waits longer than it must.
+configure({ asyncUtilTimeout: 10_000 });
 
 afterEach(() => cleanup());
 
