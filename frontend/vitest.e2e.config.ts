@@ -7,6 +7,7 @@ export default defineConfig({
   test: {
     environment: 'node',
     include: ['e2e/**/*.e2e.ts'],
+    globalSetup: ['e2e/harness/global-setup.ts'],
     env: { TZ: 'Pacific/Chatham' },
     fileParallelism: false,
     testTimeout: 120_000,

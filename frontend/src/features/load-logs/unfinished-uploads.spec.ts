@@ -42,6 +42,13 @@ describe('unfinished uploads', () => {
     expect(unfinishedUploadOf('log-2', store)?.fileName).toBe('july.csv');
   });
 
+  it('passes over entries that are not whole', () => {
+    const store = memoryStore(JSON.stringify([{ loadLogId: 'log-1', vesselId: 'vessel-1' }, null, upload]));
+    expect(findUnfinishedUpload('vessel-1', file, store)?.loadLogId).toBe('log-1');
+    forgetUpload('log-1', store);
+    expect(unfinishedUploadOf('log-1', store)).toBeNull();
+  });
+
   it('starts afresh when what is stored makes no sense, and does without a store', () => {
     const store = memoryStore('{"not": "a list"');
     expect(findUnfinishedUpload('vessel-1', file, store)).toBeNull();

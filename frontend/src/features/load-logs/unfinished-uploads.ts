@@ -1,18 +1,13 @@
-import { z } from 'zod';
 import { isSameFile, type FileFingerprint } from './file-fingerprint';
 
 /**
  * Uploads this browser began and has not finished, so that choosing the same file again goes on where the last
  * attempt stopped. Only names, sizes and our ids are kept; the bytes stay on the person's disk.
  */
-const entrySchema = z.object({
-  loadLogId: z.string(),
-  vesselId: z.string(),
-  fileName: z.string(),
-  sizeBytes: z.number(),
-  headSha256: z.string(),
-});
-export type UnfinishedUpload = z.infer<typeof entrySchema>;
+export interface UnfinishedUpload extends FileFingerprint {
+  loadLogId: string;
+  vesselId: string;
+}
 
 const KEY = 'stayledger.unfinished-uploads';
 const KEPT_MAX = 50;
@@ -28,10 +23,18 @@ function browserStore(): KeyValueStore | null {
   }
 }
 
+/** What is stored may be of an older version of ours, or anybody's: only whole entries count. */
+function isEntry(value: unknown): value is UnfinishedUpload {
+  if (typeof value !== 'object' || value === null) return false;
+  const entry = value as Partial<Record<keyof UnfinishedUpload, unknown>>;
+  const texts = [entry.loadLogId, entry.vesselId, entry.fileName, entry.headSha256];
+  return texts.every((text) => typeof text === 'string') && typeof entry.sizeBytes === 'number';
+}
+
 function readAll(store: KeyValueStore | null): UnfinishedUpload[] {
   try {
-    const parsed = z.array(entrySchema).safeParse(JSON.parse(store?.getItem(KEY) ?? '[]'));
-    return parsed.success ? parsed.data : [];
+    const stored: unknown = JSON.parse(store?.getItem(KEY) ?? '[]');
+    return Array.isArray(stored) ? stored.filter(isEntry) : [];
   } catch {
     return [];
   }
