@@ -92,7 +92,59 @@ const lightPages: RouteObject[] = [
   ),
 ];
 
-const antdPages: RouteObject[] = [];
+/** Forms and long tables. */
+const antdPages: RouteObject[] = [
+  lazyPage(
+    paths.registerVessel.pattern,
+    () => import('../pages/vessels/register-vessel.page'),
+    (module) => module.RegisterVesselPage,
+  ),
+  lazyPage(
+    paths.editVessel.pattern,
+    () => import('../pages/vessels/edit-vessel.page'),
+    (module) => module.EditVesselPage,
+  ),
+  lazyPage(
+    paths.usagePlan.pattern,
+    () => import('../pages/vessels/usage-plan.page'),
+    (module) => module.UsagePlanPage,
+  ),
+  lazyPage(
+    paths.addPosition.pattern,
+    () => import('../pages/rig/add-position.page'),
+    (module) => module.AddPositionPage,
+  ),
+  lazyPage(
+    paths.editPosition.pattern,
+    () => import('../pages/rig/edit-position.page'),
+    (module) => module.EditPositionPage,
+  ),
+  lazyPage(
+    paths.fitPart.pattern,
+    () => import('../pages/rig/fit-part.page'),
+    (module) => module.FitPartPage,
+  ),
+  lazyPage(
+    paths.editPart.pattern,
+    () => import('../pages/rig/edit-part.page'),
+    (module) => module.EditPartPage,
+  ),
+  lazyPage(
+    paths.removePart.pattern,
+    () => import('../pages/rig/remove-part.page'),
+    (module) => module.RemovePartPage,
+  ),
+  lazyPage(
+    paths.reference.pattern,
+    () => import('../pages/reference/reference.page'),
+    (module) => module.ReferencePage,
+  ),
+  lazyPage(
+    paths.profile.pattern,
+    () => import('../pages/profile/profile.page'),
+    (module) => module.ProfilePage,
+  ),
+];
 
 /** The route tree; also used by specs with a router of their own. */
 export const routes: RouteObject[] = [

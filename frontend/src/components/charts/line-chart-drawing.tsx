@@ -2,6 +2,7 @@ import { ResponsiveLine, type LineCustomSvgLayer, type LineSeries, type PointToo
 import { useColourMode } from '../../theme/colour-mode';
 import { nivoTheme } from '../../theme/nivo-theme';
 import styles from './charts.module.css';
+import { logAxis } from './log-axis';
 
 /** Days are 'YYYY-MM-DD', instants epoch milliseconds, numbers plain. */
 export type ChartX = string | number;
@@ -82,30 +83,36 @@ export function LineChartDrawing({
     data: one.points.map((point) => ({ x: toNumber(point.x), y: point.y })),
   }));
   const inkOf = (id: string) => inks[series.findIndex((one) => one.id === id) % inks.length];
+  // Of itself a logarithmic axis takes its ends from the first and last point, whichever way the data run.
+  const logX = xScale === 'log' ? logAxis(data.flatMap((one) => one.data.map((point) => point.x))) : null;
+  const logY =
+    yScale === 'log' ? logAxis(data.flatMap((one) => one.data.map((point) => point.y ?? 0))) : null;
   const pointsShown = new Set(series.filter((one) => one.showPoints).map((one) => one.id));
 
   return (
     <ResponsiveLine<NivoSeries>
+      // The figure around it is the image; its text says what the drawing shows.
+      role="presentation"
       data={data}
       theme={nivoTheme(mode)}
       colors={(one) => inkOf(String(one.id))}
       margin={{ top: 24, right: 32, bottom: 52, left: 64 }}
       xScale={
         xScale === 'log'
-          ? { type: 'log', base: 10, min: 'auto', max: 'auto' }
+          ? { type: 'log', base: 10, min: logX?.min ?? 'auto', max: logX?.max ?? 'auto' }
           : { type: 'linear', min: 'auto', max: 'auto' }
       }
       yScale={
         yScale === 'log'
-          ? { type: 'log', base: 10, min: yMin, max: yMax }
+          ? { type: 'log', base: 10, min: logY?.min ?? 'auto', max: logY?.max ?? 'auto' }
           : { type: 'linear', min: yMin, max: yMax, nice: yMax === 'auto' }
       }
       enableGridX={false}
-      gridYValues={yTicks ?? 5}
+      gridYValues={yTicks ?? logY?.ticks ?? 5}
       axisBottom={{
         tickSize: 4,
         tickPadding: 6,
-        tickValues: xTicks?.map(toNumber) ?? 5,
+        tickValues: xTicks?.map(toNumber) ?? logX?.ticks ?? 5,
         format: (value) => formatX(fromNumber(Number(value))),
         legend: xTitle,
         legendOffset: 42,
@@ -114,7 +121,7 @@ export function LineChartDrawing({
       axisLeft={{
         tickSize: 4,
         tickPadding: 6,
-        tickValues: yTicks ?? 5,
+        tickValues: yTicks ?? logY?.ticks ?? 5,
         format: (value) => formatY(Number(value)),
         legend: yTitle,
         legendOffset: -54,

@@ -15,6 +15,8 @@ export interface LineChartProps<Row> extends LineChartCanvasProps {
   title: string;
   /** What the drawing shows, in one sentence; read out in place of it and shown below the title. */
   description: string;
+  /** Level of the title in the page: 2 right below the page's heading. */
+  headingLevel?: 2 | 3;
   height?: number;
   /** Twin of the drawing: the same figures as rows. */
   rows: readonly Row[];
@@ -31,6 +33,7 @@ export interface LineChartProps<Row> extends LineChartCanvasProps {
 export function LineChart<Row>({
   title,
   description,
+  headingLevel = 3,
   height = 320,
   rows,
   columns,
@@ -41,11 +44,12 @@ export function LineChart<Row>({
   ...drawing
 }: LineChartProps<Row>) {
   const id = useId();
+  const Heading = headingLevel === 2 ? 'h2' : 'h3';
   const empty = drawing.series.every((series) => series.points.length === 0);
   return (
     <figure className={styles.figure} aria-labelledby={`${id}title`}>
       <figcaption>
-        <h3 id={`${id}title`}>{title}</h3>
+        <Heading id={`${id}title`}>{title}</Heading>
         <p className={styles.description}>{description}</p>
       </figcaption>
       {empty ? (

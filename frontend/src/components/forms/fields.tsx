@@ -147,7 +147,7 @@ function optionalLabel(label: string, required: string | undefined): ReactNode {
     label
   ) : (
     <span>
-      {label} <span className="soft">(may stay empty)</span>
+      {label} <span className="soft">(optional)</span>
     </span>
   );
 }

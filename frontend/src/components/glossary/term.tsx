@@ -5,7 +5,9 @@ import styles from './term.module.css';
 /** A word with its explanation behind it, opened by pointer or keyboard and closed by Escape or by going on. */
 export function Term({ word, children }: { word: GlossaryWord; children?: ReactNode }) {
   const id = useId();
-  const [open, setOpen] = useState(false);
+  // Where the note stands, in the window: a scrolling table would cut off one that is placed inside it.
+  const [at, setAt] = useState<{ left: number; top: number } | null>(null);
+  const open = at !== null;
   const place = useRef<HTMLSpanElement>(null);
 
   useEffect(() => {
@@ -16,12 +18,15 @@ export function Term({ word, children }: { word: GlossaryWord; children?: ReactN
           ? event.key === 'Escape'
           : !place.current?.contains(event.target as Node)
       ) {
-        setOpen(false);
+        setAt(null);
       }
     };
     document.addEventListener('keydown', leave);
     document.addEventListener('pointerdown', leave);
+    const goOn = () => setAt(null);
+    window.addEventListener('scroll', goOn, { capture: true, passive: true });
     return () => {
+      window.removeEventListener('scroll', goOn, { capture: true });
       document.removeEventListener('keydown', leave);
       document.removeEventListener('pointerdown', leave);
     };
@@ -34,13 +39,24 @@ export function Term({ word, children }: { word: GlossaryWord; children?: ReactN
         className={styles.term}
         aria-expanded={open}
         aria-controls={id}
-        onClick={() => setOpen((before) => !before)}
+        onClick={(event) => setAt(open ? null : below(event.currentTarget))}
       >
         {children ?? word}
       </button>
-      <span id={id} role="note" className={styles.note} hidden={!open}>
+      <span id={id} role="note" className={styles.note} hidden={!open} style={at ?? undefined}>
         {GLOSSARY[word]}
       </span>
     </span>
   );
+}
+
+const NOTE_WIDTH_PX = 320;
+const EDGE_PX = 16;
+
+function below(button: HTMLElement): { left: number; top: number } {
+  const { left, bottom } = button.getBoundingClientRect();
+  return {
+    left: Math.max(EDGE_PX, Math.min(left, window.innerWidth - NOTE_WIDTH_PX - EDGE_PX)),
+    top: bottom + 4,
+  };
 }

@@ -151,7 +151,7 @@ function NotAssessed({ positions }: { positions: PositionDto[] }) {
   const byAge = positions.filter((position) => position.part?.standing.assessment === 'calendar-only');
   return (
     <section aria-labelledby="not-assessed">
-      <h2 id="not-assessed">What was not looked at</h2>
+      <h2 id="not-assessed">What is not assessed</h2>
       {unknown.length === 0 && byAge.length === 0 ? (
         <p>The loads of every part on the list are recorded or follow from a part beside it.</p>
       ) : null}

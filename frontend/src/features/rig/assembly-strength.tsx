@@ -1,6 +1,7 @@
 import type { FittedPartDto } from '@stayledger/shared/contracts/parts';
 import { Attention } from '../../components/feedback/attention';
 import { useFormat } from '../../lib/formatting/use-format';
+import styles from './rig.module.css';
 import { BREAKING_LOAD_SOURCE_WORDS } from './part-words';
 
 /** Breaking load of the assembly as fitted, its weakest element, and what nobody knows about it. */
@@ -8,7 +9,7 @@ export function AssemblyStrength({ part }: { part: FittedPartDto }) {
   const format = useFormat();
   const { breakingLoadKn, weakestElement, unknownElements } = part.assembly;
   return (
-    <section aria-labelledby="assembly">
+    <section aria-labelledby="assembly" className={styles.assembly}>
       <h2 id="assembly">Strength as fitted</h2>
       <p>
         Wire alone: {format.force(part.breakingLoadKn)}, {BREAKING_LOAD_SOURCE_WORDS[part.breakingLoadSource]}

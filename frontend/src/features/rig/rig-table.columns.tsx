@@ -61,6 +61,7 @@ export function rigColumns({
     {
       key: 'allowance',
       title: 'Allowance used',
+      help: 'allowance used',
       numeric: true,
       render: ({ part }) => format.allowance(part?.standing.allowanceUsed),
       value: ({ part }) => part?.standing.allowanceUsed ?? null,
@@ -68,13 +69,14 @@ export function rigColumns({
     {
       key: 'replace-by',
       title: 'Replace by',
+      help: 'replace by',
       render: ({ part }) =>
         part?.standing.replaceByOn ? (
           <>
             <DueWord due={part.standing.due}>
               {format.dueDay(part.standing.replaceByOn, todayOn, zone)}
             </DueWord>
-            <span className={styles.second}>
+            <span className={styles.rule}>
               {part.standing.governingRule === 'calendar' ? 'calendar rule' : 'fatigue allowance'}
             </span>
           </>
@@ -86,6 +88,7 @@ export function rigColumns({
     {
       key: 'basis',
       title: 'Load basis',
+      help: 'load basis',
       render: ({ part }) =>
         part ? (
           <>
@@ -100,6 +103,7 @@ export function rigColumns({
     {
       key: 'breaking-load',
       title: `Breaking load, ${format.forceUnit}`,
+      help: 'breaking load',
       numeric: true,
       render: ({ part }) => format.forceFigure(part?.breakingLoadKn),
       value: ({ part }) => (part ? format.forceFromKn(part.breakingLoadKn) : null),

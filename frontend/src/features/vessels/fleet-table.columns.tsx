@@ -31,6 +31,7 @@ export function fleetColumns(
     {
       key: 'governing',
       title: 'What comes first',
+      help: 'replace by',
       render: (row) =>
         row.governing ? (
           <>
@@ -48,6 +49,7 @@ export function fleetColumns(
     {
       key: 'allowance',
       title: 'Allowance used',
+      help: 'allowance used',
       numeric: true,
       render: (row) => format.allowance(row.governing?.allowanceUsed),
       value: (row) => row.governing?.allowanceUsed ?? null,

@@ -27,6 +27,8 @@ export interface Formatter {
   significant: (value: number | null | undefined, figures?: number) => string;
   /** Very large or very small amounts: 3.2 × 10^-6 written with superscripts. */
   scientific: (value: number | null | undefined, figures?: number) => string;
+  /** 10⁶ for a whole power of ten, else as `scientific`: for ticks of logarithmic axes. */
+  powerOfTen: (value: number) => string;
   force: (kn: number | null | undefined) => string;
   /** The figure alone, for columns whose header names the unit. */
   forceFigure: (kn: number | null | undefined) => string;
@@ -101,6 +103,10 @@ export function createFormatter(preferences: Preferences): Formatter {
     number,
     significant,
     scientific,
+    powerOfTen: (value) => {
+      const exponent = Math.round(Math.log10(value));
+      return value === Number(`1e${exponent}`) ? `10${superscript(exponent)}` : scientific(value);
+    },
     force: (kn) => withUnit(forceFigure(kn), preferences.forceUnit),
     forceFigure,
     forceToKn: (value) => value * knPerUnit,
@@ -111,7 +117,7 @@ export function createFormatter(preferences: Preferences): Formatter {
     lengthFromM: (m) => m / mPerUnit,
     diameter: (mm) => withUnit(mm === null || mm === undefined ? NO_VALUE : number(mm, decimalsOf(mm)), 'mm'),
     hours: (hours) =>
-      withUnit(number(hours, hours !== null && hours !== undefined && hours < 10 ? 1 : 0), 'h'),
+      withUnit(number(hours, hours !== null && hours !== undefined && hours > 0 && hours < 10 ? 1 : 0), 'h'),
     bytes: (bytes) => {
       if (bytes === null || bytes === undefined) return NO_VALUE;
       const step = bytes < 1e3 ? 0 : bytes < 1e6 ? 1 : bytes < 1e9 ? 2 : 3;

@@ -11,6 +11,7 @@ import { CurveFacts } from '../../features/reference/curve-facts';
 import { curvePoints } from '../../features/reference/curve-points';
 import { MEASURE_WORDS, measureUnit } from '../../features/reference/reference-words';
 import { referenceQueries } from '../../features/reference/reference.queries';
+import styles from '../../features/reference/reference.module.css';
 import { useFormat } from '../../lib/formatting/use-format';
 
 export function CurvePage() {
@@ -44,6 +45,7 @@ function CurveChart({ curve }: { curve: CurveDto }) {
   return (
     <LineChart
       title="Range against cycles to failure"
+      headingLevel={2}
       description="Both axes are logarithmic: one step to the left is a tenth of the life."
       series={[
         { id: 'curve', label: curve.name, points: points.map(({ range: y, cycles: x }) => ({ x, y })) },
@@ -52,8 +54,7 @@ function CurveChart({ curve }: { curve: CurveDto }) {
       yScale="log"
       xTitle="Cycles to failure"
       yTitle={rangeTitle}
-      xTicks={[1e4, 1e5, 1e6, 1e7, 1e8, 1e9]}
-      formatX={(x) => format.scientific(Number(x), 2)}
+      formatX={(x) => format.powerOfTen(Number(x))}
       formatY={(y) => format.significant(y, 3)}
       rows={points}
       rowKey={(point) => String(point.range)}
@@ -83,7 +84,7 @@ function Segments({ curve }: { curve: CurveDto }) {
   const format = useFormat();
   const unit = measureUnit(curve.measure);
   return (
-    <section aria-labelledby="segments">
+    <section aria-labelledby="segments" className={styles.narrow}>
       <h2 id="segments">Segments</h2>
       <p>log10 N = log10 a − m · log10 S, in the first segment whose lowest range S reaches.</p>
       <DataTable

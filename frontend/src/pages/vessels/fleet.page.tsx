@@ -74,7 +74,13 @@ export function FleetPage() {
             }
             return (
               <>
-                <DataTable caption="Vessels" rows={rows} columns={columns} rowKey={(row) => row.id} />
+                <DataTable
+                  caption="Vessels"
+                  stackOnPhone
+                  rows={rows}
+                  columns={columns}
+                  rowKey={(row) => row.id}
+                />
                 <div className={styles.more}>
                   {vessels.hasNextPage ? (
                     <PlainButton

@@ -42,6 +42,7 @@ export function VesselRigPage() {
             <p className={styles.summary}>{rigSummary(items)}</p>
             <DataTable
               caption={`Positions and parts of ${vessel.name}`}
+              stackOnPhone
               rows={items}
               columns={columns}
               rowKey={(position) => position.id}
