@@ -6,6 +6,8 @@ const TILE_BITS = 2;
 const TILE_MASK = (1 << TILE_BITS) - 1;
 const TILE_BINS = 1 << (2 * TILE_BITS);
 const FIRST_SLOTS = 256;
+/** Widest span of tiles that is sorted by counting instead of comparing. */
+const WIDEST_COUNTING_SORT = 1 << 16;
 /** Counts above this move to the table of doubles before they could run over. */
 const LARGEST_COUNT = 0xfffffff0;
 
@@ -37,6 +39,11 @@ export class CycleBins {
     return this.wide === null ? this.tiles * TILE_BINS : this.wide.size;
   }
 
+  /** Whether all extremes so far are 32-bit whole numbers. */
+  get isCompact(): boolean {
+    return this.wide === null;
+  }
+
   /** Adds one cycle between two extremes. */
   add(low: number, high: number): void {
     const lowWord = low | 0;
@@ -65,18 +72,38 @@ export class CycleBins {
     if (this.wide !== null) return this.wide.table();
     const { counts, tiles } = this;
     let size = 0;
-    for (let bin = 0; bin < tiles * TILE_BINS; bin++) if (counts[bin] > 0) size++;
+    for (let bin = 0; bin < tiles * TILE_BINS; bin++) size += isAboveZero(counts[bin]);
     if (size === 0) return emptyCycleTable();
-    const low = new Float64Array(size);
-    const high = new Float64Array(size);
-    const count = new Float64Array(size);
+    // One more than needed: every bin is written, and only a filled one is stepped past. A branch on whether a bin
+    // is filled would be guessed wrong too often.
+    const low = new Float64Array(size + 1);
+    const high = new Float64Array(size + 1);
+    const count = new Float64Array(size + 1);
+    const { keys, places } = this;
+    const order = this.sortedSlots();
     let n = 0;
-    this.forEach((binLow, binHigh, cycles) => {
-      low[n] = binLow;
-      high[n] = binHigh;
-      count[n++] = cycles;
-    });
-    return sortedTable(low, high, count);
+    let from = 0;
+    // Tiles of one row of tiles stand together; each of their four lows runs through all of them.
+    while (from < order.length) {
+      const tileLow = keys[order[from] * 2];
+      let to = from + 1;
+      while (to < order.length && keys[order[to] * 2] === tileLow) to++;
+      for (let row = 0; row <= TILE_MASK; row++) {
+        for (let i = from; i < to; i++) {
+          const first = (places[order[i]] - 1) * TILE_BINS + (row << TILE_BITS);
+          const highs = keys[order[i] * 2 + 1] << TILE_BITS;
+          for (let column = 0; column <= TILE_MASK; column++) {
+            const cycles = counts[first + column];
+            low[n] = (tileLow << TILE_BITS) + row;
+            high[n] = highs + column;
+            count[n] = cycles;
+            n += isAboveZero(cycles);
+          }
+        }
+      }
+      from = to;
+    }
+    return { low: low.slice(0, size), high: high.slice(0, size), count: count.slice(0, size) };
   }
 
   /** Forgets everything, keeping the memory for the next use. */
@@ -99,6 +126,31 @@ export class CycleBins {
         if (cycles > 0) visit(low + (bin >> TILE_BITS), high + (bin & TILE_MASK), cycles);
       }
     }
+  }
+
+  /** The slots in use, by the tile's low and then its high. */
+  private sortedSlots(): Int32Array {
+    const { keys, places, slots, tiles } = this;
+    const used = new Int32Array(tiles);
+    let n = 0;
+    for (let slot = 0; slot < slots; slot++) if (places[slot] !== 0) used[n++] = slot;
+    let lowest = keys[used[0] * 2];
+    let greatestLow = lowest;
+    let leastHigh = keys[used[0] * 2 + 1];
+    let highest = leastHigh;
+    for (let i = 1; i < tiles; i++) {
+      const low = keys[used[i] * 2];
+      const high = keys[used[i] * 2 + 1];
+      if (low < lowest) lowest = low;
+      if (low > greatestLow) greatestLow = low;
+      if (high < leastHigh) leastHigh = high;
+      if (high > highest) highest = high;
+    }
+    if (greatestLow - lowest > WIDEST_COUNTING_SORT || highest - leastHigh > WIDEST_COUNTING_SORT) {
+      return used.sort((a, b) => keys[a * 2] - keys[b * 2] || keys[a * 2 + 1] - keys[b * 2 + 1]);
+    }
+    const byHigh = countingSort(used, keys, 1, leastHigh, highest);
+    return countingSort(byHigh, keys, 0, lowest, greatestLow);
   }
 
   private newTile(slot: number, tileLow: number, tileHigh: number): number {
@@ -138,6 +190,30 @@ export class CycleBins {
     this.wide = wide;
     return wide;
   }
+}
+
+/** 1 for a count above 0, without a branch: the sign of the negated halves. */
+function isAboveZero(count: number): number {
+  return (0 - (count >>> 1) - (count & 1)) >>> 31;
+}
+
+/** Slots ordered by one word of their keys, between the smallest and the largest of them; equal ones keep their order. */
+function countingSort(
+  slots: Int32Array,
+  keys: Int32Array,
+  word: number,
+  smallest: number,
+  largest: number,
+): Int32Array {
+  const starts = new Int32Array(largest - smallest + 2);
+  for (let i = 0; i < slots.length; i++) starts[keys[slots[i] * 2 + word] - smallest + 1]++;
+  for (let i = 1; i < starts.length; i++) starts[i] += starts[i - 1];
+  const sorted = new Int32Array(slots.length);
+  for (let i = 0; i < slots.length; i++) {
+    const slot = slots[i];
+    sorted[starts[keys[slot * 2 + word] - smallest]++] = slot;
+  }
+  return sorted;
 }
 
 /** Multiplicative hash: the high bits of the product depend on all bits of both. */

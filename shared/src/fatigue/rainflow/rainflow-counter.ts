@@ -1,4 +1,4 @@
-import { CycleBins } from './cycle-bins.js';
+import { ClosedCycles } from './closed-cycles.js';
 import type { LoadSpectrum } from './load-spectrum.js';
 import { levelOf } from './level-of.js';
 import { mergeAll } from './merge-spectra.js';
@@ -22,9 +22,8 @@ export interface RainflowState {
  */
 export class RainflowCounter {
   readonly step: number;
-  private readonly bins = new Map<number, CycleBins>();
-  private binsDay = NaN;
-  private dayBins: CycleBins;
+  private readonly cycles: ClosedCycles;
+  private day = NaN;
   private stack = new Float64Array(PART + 64);
   private stackDay = new Int32Array(PART + 64);
   /** Turning points known to be final, on the stack. */
@@ -45,7 +44,7 @@ export class RainflowCounter {
       throw new RangeError(`the step must be 0 or a positive number, not ${options.step}`);
     }
     this.step = options.step;
-    this.dayBins = new CycleBins(options.step > 0);
+    this.cycles = new ClosedCycles(options.step > 0);
   }
 
   /** A counter that carries on where another one stopped. */
@@ -67,8 +66,7 @@ export class RainflowCounter {
 
   /** Points on the residue now, and distinct cycles held: what the counter's memory grows with. */
   get held(): { residue: number; cycles: number } {
-    let cycles = 0;
-    for (const bins of this.bins.values()) cycles += bins.held;
+    let cycles = this.cycles.held;
     if (this.before !== null) for (const day of this.before.days) cycles += day.cycles.count.length;
     return { residue: this.top + 1 + (this.before?.residue.length ?? 0), cycles };
   }
@@ -82,6 +80,10 @@ export class RainflowCounter {
    * @throws RangeError when a load is infinite
    */
   push(block: Float64Array, n: number, day: number): void {
+    if (day !== this.day) {
+      this.cycles.packOther(day);
+      this.day = day;
+    }
     for (let from = 0; from < n; from += PART) {
       const to = Math.min(n, from + PART);
       const begun = this.direction === 0 ? this.findDirection(block, from, to, day) : from;
@@ -126,7 +128,7 @@ export class RainflowCounter {
    */
   private run(block: Float64Array, from: number, to: number, day: number): void {
     this.makeRoom(to - from);
-    const { step, stack, stackDay } = this;
+    const { step, stack, stackDay, cycles } = this;
     let { top, last } = this;
     let rising = this.direction > 0;
     let turns = 0;
@@ -161,7 +163,7 @@ export class RainflowCounter {
           const low = stack[top - 2];
           // Later counts as higher: ties close on the way up.
           if (low < stack[top - 4] || high > level) break;
-          this.count(stackDay[top - 3], low, high);
+          cycles.add(stackDay[top - 3], low, high);
           stack[top - 3] = level;
           stackDay[top - 3] = lastDay;
           top -= 2;
@@ -190,7 +192,7 @@ export class RainflowCounter {
           const high = stack[top - 2];
           // Later counts as higher: ties stay open on the way down.
           if (high >= stack[top - 4] || low <= level) break;
-          this.count(stackDay[top - 2], low, high);
+          cycles.add(stackDay[top - 2], low, high);
           stack[top - 3] = level;
           stackDay[top - 3] = lastDay;
           top -= 2;
@@ -218,9 +220,6 @@ export class RainflowCounter {
   }
 
   private own(): LoadSpectrum {
-    const days = [...this.bins.keys()]
-      .sort((a, b) => a - b)
-      .map((day) => ({ day, cycles: this.bins.get(day)!.table() }));
     const size = this.top + (this.last === this.last ? 1 : 0);
     const residue = this.stack.slice(0, size);
     const residueDay = this.stackDay.slice(0, size);
@@ -231,7 +230,7 @@ export class RainflowCounter {
     for (let i = 0; i < size; i++) residue[i] += 0;
     const open: LoadSpectrum = {
       step: this.step,
-      days,
+      days: this.cycles.days(),
       residue: new Float64Array(0),
       residueDay: new Int32Array(0),
       samples: this.counted,
@@ -247,21 +246,6 @@ export class RainflowCounter {
       turningPoints: 0,
     };
     return size === 0 ? open : { ...mergeAll([open, end]), turningPoints: this.turns };
-  }
-
-  private count(day: number, low: number, high: number): void {
-    if (day !== this.binsDay) this.useBins(day);
-    this.dayBins.add(low, high);
-  }
-
-  private useBins(day: number): void {
-    let bins = this.bins.get(day);
-    if (bins === undefined) {
-      bins = new CycleBins(this.step > 0);
-      this.bins.set(day, bins);
-    }
-    this.binsDay = day;
-    this.dayBins = bins;
   }
 
   /** Room on the stack for one more turning point a sample. */

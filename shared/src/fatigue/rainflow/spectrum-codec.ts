@@ -1,14 +1,14 @@
-import type { CycleTable, DayCycles, LoadSpectrum } from './load-spectrum.js';
+import { ByteReader } from './byte-reader.js';
+import { ByteWriter } from './byte-writer.js';
+import { crc32 } from './crc32.js';
+import { readCycles, writeCycles } from './cycle-codec.js';
+import type { DayCycles, LoadSpectrum } from './load-spectrum.js';
+import { SpectrumFormatError } from './spectrum-format-error.js';
 
 const VERSION = 1;
 const WHOLE_LEVELS = 1;
 const RAW_LOADS = 0;
 const CHECK_BYTES = 4;
-
-/** Stored bytes that are no load spectrum: cut, changed or of another version. */
-export class SpectrumFormatError extends Error {
-  override name = 'SpectrumFormatError';
-}
 
 /**
  * A load spectrum as bytes, for storing. Equal spectra give equal bytes, so a hash of them identifies the count.
@@ -49,6 +49,7 @@ export function encodeSpectrum(spectrum: LoadSpectrum): Uint8Array {
     previousDay = day;
     writeCycles(out, cycles, whole);
   }
+  out.checkSum();
   return out.finish();
 }
 
@@ -107,180 +108,4 @@ function hasWholeLevels({ step, days, residue }: LoadSpectrum): boolean {
     for (const level of cycles.high) if (!Number.isSafeInteger(level)) return false;
   }
   return true;
-}
-
-function writeCycles(out: ByteWriter, { low, high, count }: CycleTable, whole: boolean): void {
-  const size = count.length;
-  out.whole(size);
-  let previousLow = 0;
-  let previousHigh = 0;
-  for (let i = 0; i < size; i++) {
-    if (whole) {
-      if (i === 0) out.signed(low[i]);
-      else out.whole(low[i] - previousLow);
-      out.whole(i > 0 && low[i] === previousLow ? high[i] - previousHigh : high[i] - low[i]);
-    } else {
-      out.double(low[i]);
-      out.double(high[i]);
-    }
-    out.whole(count[i]);
-    previousLow = low[i];
-    previousHigh = high[i];
-  }
-}
-
-function readCycles(input: ByteReader, whole: boolean): CycleTable {
-  const size = input.length(whole ? 3 : 17);
-  const low = new Float64Array(size);
-  const high = new Float64Array(size);
-  const count = new Float64Array(size);
-  let previousLow = 0;
-  let previousHigh = 0;
-  for (let i = 0; i < size; i++) {
-    if (whole) {
-      const growth = i === 0 ? input.signed() : input.whole();
-      const sameLow = i > 0 && growth === 0;
-      previousLow = previousLow + growth;
-      previousHigh = input.whole() + (sameLow ? previousHigh : previousLow);
-    } else {
-      previousLow = input.double();
-      previousHigh = input.double();
-    }
-    low[i] = previousLow;
-    high[i] = previousHigh;
-    count[i] = input.whole();
-    const ordered = i === 0 || low[i] > low[i - 1] || (low[i] === low[i - 1] && high[i] > high[i - 1]);
-    if (!ordered || !(high[i] > low[i])) input.fail('cycles out of order');
-  }
-  return { low, high, count };
-}
-
-class ByteWriter {
-  private bytes = new Uint8Array(1024);
-  private view = new DataView(this.bytes.buffer);
-  private at = 0;
-
-  byte(value: number): void {
-    this.room(1);
-    this.bytes[this.at++] = value;
-  }
-
-  double(value: number): void {
-    this.room(8);
-    // Adding zero turns -0 into 0: equal loads, equal bytes.
-    this.view.setFloat64(this.at, value + 0, true);
-    this.at += 8;
-  }
-
-  whole(value: number): void {
-    if (!Number.isSafeInteger(value) || value < 0) {
-      throw new RangeError(`${value} is no whole number from 0 to 2^53 - 1`);
-    }
-    this.room(8);
-    let rest = value;
-    while (rest >= 0x80) {
-      // Remainder and division instead of bit operations: values may exceed 32 bits.
-      this.bytes[this.at++] = (rest % 0x80) | 0x80;
-      rest = Math.floor(rest / 0x80);
-    }
-    this.bytes[this.at++] = rest;
-  }
-
-  /** Zigzag by hand, in two parts: the sign in the lowest bit of the first byte. */
-  signed(value: number): void {
-    const size = Math.abs(value);
-    const sign = value < 0 ? 1 : 0;
-    const first = size % 0x40;
-    const rest = Math.floor(size / 0x40);
-    this.byte((first << 1) | sign | (rest > 0 ? 0x80 : 0));
-    if (rest > 0) this.whole(rest);
-  }
-
-  finish(): Uint8Array {
-    this.room(CHECK_BYTES);
-    this.view.setUint32(this.at, crc32(this.bytes, this.at), true);
-    return this.bytes.slice(0, this.at + CHECK_BYTES);
-  }
-
-  private room(size: number): void {
-    if (this.at + size <= this.bytes.length) return;
-    const bytes = new Uint8Array(this.bytes.length * 2);
-    bytes.set(this.bytes);
-    this.bytes = bytes;
-    this.view = new DataView(bytes.buffer);
-  }
-}
-
-class ByteReader {
-  constructor(
-    private readonly view: DataView,
-    private at: number,
-    private readonly end: number,
-  ) {}
-
-  byte(): number {
-    if (this.at >= this.end) this.fail('it ends too early');
-    return this.view.getUint8(this.at++);
-  }
-
-  double(): number {
-    if (this.at + 8 > this.end) this.fail('it ends too early');
-    const value = this.view.getFloat64(this.at, true);
-    this.at += 8;
-    if (!Number.isFinite(value)) this.fail('a load is no number');
-    return value;
-  }
-
-  whole(): number {
-    let value = 0;
-    let weight = 1;
-    for (;;) {
-      const byte = this.byte();
-      value += (byte & 0x7f) * weight;
-      if (byte < 0x80) break;
-      weight *= 0x80;
-      if (weight > 2 ** 49) this.fail('a number is too long');
-    }
-    if (!Number.isSafeInteger(value)) this.fail('a number is too large');
-    return value;
-  }
-
-  signed(): number {
-    const byte = this.byte();
-    let size = (byte & 0x7f) >> 1;
-    if (byte >= 0x80) size += this.whole() * 0x40;
-    return (byte & 1) === 1 ? 0 - size : size;
-  }
-
-  /** A number of items that must still fit into the bytes left, so that a changed one cannot ask for memory. */
-  length(leastBytesEach: number): number {
-    const value = this.whole();
-    if (value * leastBytesEach > this.end - this.at) this.fail('it ends too early');
-    return value;
-  }
-
-  expectEnd(): void {
-    if (this.at !== this.end) this.fail('something follows its end');
-  }
-
-  fail(what: string): never {
-    throw new SpectrumFormatError(`the stored spectrum is damaged at byte ${this.at}: ${what}`);
-  }
-}
-
-let crcTable: Uint32Array | null = null;
-
-/** CRC-32 as in ISO 3309 (polynomial 0xEDB88320, reflected). */
-function crc32(bytes: Uint8Array, end: number): number {
-  if (crcTable === null) {
-    crcTable = new Uint32Array(256);
-    for (let n = 0; n < 256; n++) {
-      let value = n;
-      for (let bit = 0; bit < 8; bit++) value = value & 1 ? (value >>> 1) ^ 0xedb88320 : value >>> 1;
-      crcTable[n] = value;
-    }
-  }
-  let sum = 0xffffffff;
-  for (let i = 0; i < end; i++) sum = crcTable[(sum ^ bytes[i]) & 0xff] ^ (sum >>> 8);
-  return (sum ^ 0xffffffff) >>> 0;
 }
