@@ -37,16 +37,29 @@ export function FleetFilters({
   filter: ReturnType<typeof readFleetFilter>;
   onChange: (next: Partial<FleetFilter>) => void;
 }) {
-  const [typed, setTyped] = useState(filter.q ?? '');
+  const asked = filter.q ?? '';
+  const [typed, setTyped] = useState(asked);
+  const [known, setKnown] = useState(asked);
+  const [sent, setSent] = useState(asked);
+  if (asked !== known) {
+    // The address changed. Where it was not this field that changed it, the field follows; otherwise what was typed since
+    // then stays.
+    setKnown(asked);
+    if (asked !== sent) setTyped(asked);
+  }
   const latest = useRef(onChange);
   useEffect(() => {
     latest.current = onChange;
   });
   useEffect(() => {
-    if (typed.trim() === (filter.q ?? '')) return;
-    const pause = window.setTimeout(() => latest.current({ q: typed.trim() || undefined }), TYPING_PAUSE_MS);
+    const words = typed.trim();
+    if (words === asked) return;
+    const pause = window.setTimeout(() => {
+      setSent(words);
+      latest.current({ q: words || undefined });
+    }, TYPING_PAUSE_MS);
     return () => window.clearTimeout(pause);
-  }, [typed, filter.q]);
+  }, [typed, asked]);
 
   return (
     <search className={styles.filters}>
