@@ -40,7 +40,8 @@ export function TextField({
     >
       {lines ? (
         <Input.TextArea
-          autoSize={{ minRows: lines, maxRows: 12 }}
+          // Growing with the text would need a measuring element that the content security policy leaves unstyled.
+          rows={lines}
           maxLength={maxLength}
           placeholder={placeholder}
         />

@@ -16,7 +16,7 @@ interface ContractFormOptions<Values, Input, Reply> {
 
 export interface ContractForm<Values> {
   form: FormInstance<Values>;
-  submit: (values: Values) => void;
+  submit: () => void;
   pending: boolean;
   /** What the server refused as a whole; refusals of one field stand at the field. */
   problem: Error | null;
@@ -38,7 +38,9 @@ export function useContractForm<Values extends object, Input, Reply>(
 
   return {
     form,
-    submit: (values) => {
+    submit: () => {
+      // All values, not only those of fields on show: a field hidden by another one's answer keeps what it holds.
+      const values = form.getFieldsValue(true) as Values;
       const checked = check(options.contract, options.toInput(values));
       if (checked.ok) mutation.mutate(checked.value);
       else showFieldErrors(form, byField(checked.issues));
