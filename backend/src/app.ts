@@ -16,6 +16,9 @@ import { ENV } from './config/config.module.js';
 import type { Env } from './config/env.js';
 import { UPLOADS_PATH, UploadsHandler } from './load-logs/uploads.handler.js';
 
+/** For the all-in-one process, which takes in the demo's logs. */
+export { LogIntake } from './load-logs/log-intake.service.js';
+
 /** Contracts allow no reply or request near this size; load logs go another way. */
 const BODY_LIMIT = '256kb';
 const WEB_APP_FOLDER = join(__dirname, '../../frontend/dist');

@@ -1,4 +1,4 @@
-import { EntityManager } from '@mikro-orm/postgresql';
+import { EntityManager, LockMode } from '@mikro-orm/postgresql';
 import { Injectable } from '@nestjs/common';
 import type {
   LoadLogDto,
@@ -11,6 +11,7 @@ import { Clock } from '../common/clock/clock.js';
 import { StateConflictError } from '../common/errors/app-error.js';
 import { AccountService } from '../ledger/account.service.js';
 import { PartStandingService } from '../life/part-standing.service.js';
+import { FittedPart } from '../parts/fitted-part.entity.js';
 import { LoadLogReplies } from './load-log-replies.js';
 import { LoadLogsService } from './load-logs.service.js';
 import { PostingPlanService } from './posting-plan.service.js';
@@ -87,8 +88,10 @@ export class DecisionsService {
 
   /** In the order of their ids, so that two postings of different logs never wait for each other in a circle. */
   private async lockParts(positionIds: string[]): Promise<void> {
-    await this.em.execute('select id from fitted_part where position_id = any (?) order by id for update', [
-      positionIds,
-    ]);
+    await this.em.find(
+      FittedPart,
+      { position: { $in: positionIds } },
+      { orderBy: { id: 'asc' }, lockMode: LockMode.PESSIMISTIC_WRITE, refresh: true },
+    );
   }
 }

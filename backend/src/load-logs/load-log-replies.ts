@@ -6,7 +6,7 @@ import { LOG_STORAGE, type LogStorage } from '../storage/log-storage.js';
 import { User } from '../users/user.entity.js';
 import { Vessel } from '../vessels/vessel.entity.js';
 import { LoadLog } from './load-log.entity.js';
-import { toLoadLogDto } from './load-log.mapper.js';
+import { type SameFile, toLoadLogDto } from './load-log.mapper.js';
 
 /** Gathers what replies about load logs need beside their rows, for one log or a page of them. */
 @Injectable()
@@ -61,15 +61,19 @@ export class LoadLogReplies {
     return new Map(jobs.map((job) => [job.subjectId, job]));
   }
 
-  /** For each log, another one of the vessel with the same bytes: the posted one if there is one, else the first. */
-  private async twinsOf(logs: readonly LoadLog[]): Promise<Map<string, LoadLog>> {
+  /**
+   * For each log, another one of the vessel with the same bytes: the posted one if there is one, else the first. Read
+   * as plain rows: the logs replied about must not be touched by a later look, or a reply could mix two states.
+   */
+  private async twinsOf(logs: readonly LoadLog[]): Promise<Map<string, SameFile>> {
     const hashes = logs.flatMap(({ sha256 }) => (sha256 ? [sha256] : []));
-    const same = await this.em.find(
-      LoadLog,
-      { vessel: logs[0].vessel, sha256: { $in: hashes } },
-      { orderBy: { createdAt: 'asc', id: 'asc' } },
+    if (hashes.length === 0) return new Map();
+    const same = await this.em.execute<(SameFile & { sha256: string })[]>(
+      `select id, state, file_name as "fileName", sha256 from load_log
+        where vessel_id = ? and sha256 in (?) order by created_at, id`,
+      [logs[0].vessel, hashes],
     );
-    const twins = new Map<string, LoadLog>();
+    const twins = new Map<string, SameFile>();
     for (const log of logs) {
       const others = same.filter(({ id, sha256 }) => id !== log.id && sha256 === log.sha256);
       const twin = others.find(({ state }) => state === 'posted') ?? others.at(0);

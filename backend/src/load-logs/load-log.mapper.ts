@@ -3,13 +3,16 @@ import type { Job } from '../jobs/job.entity.js';
 import { toJobDto } from '../jobs/job.mapper.js';
 import type { LoadLog } from './load-log.entity.js';
 
+/** Another log of the vessel that holds the same bytes. */
+export type SameFile = Pick<LoadLog, 'id' | 'state' | 'fileName'>;
+
 /** What a reply says beside the row itself. */
 export interface LoadLogContext {
   vesselName: string;
   /** Names by user id. */
   names: ReadonlyMap<string, string>;
   job: Job | null;
-  sameFileAs: LoadLog | null;
+  sameFileAs: SameFile | null;
   /** Bytes that have arrived so far; only asked of the storage while a log is being received. */
   receivedBytes: number;
 }

@@ -6,7 +6,7 @@ import type { ErrorCode, ErrorReply } from '@stayledger/shared/contracts/errors'
 import { LOAD_LOG_SIZE_MAX_BYTES } from '@stayledger/shared/contracts/load-logs';
 import { idSchema } from '@stayledger/shared/contracts/values';
 import { DataStore, Server, Upload } from '@tus/server';
-import type { RequestHandler } from 'express';
+import type { RequestHandler, Response } from 'express';
 import { type Principal, principalOf, reachOf } from '../auth/principal.js';
 import { AppError, ForbiddenError, InvalidRequestError, NotFoundError } from '../common/errors/app-error.js';
 import { currentRequestId } from '../common/http/request-context.js';
@@ -63,6 +63,7 @@ export class UploadsHandler {
     this.handle = (request, response, next) => {
       const me = principalOf(request);
       if (!me.permissions.has('load-logs:upload')) throw new ForbiddenError();
+      takeCallbackAtEnd(response);
       this.scopes.run({ me, log: null }, () => {
         server.handle(request, response).catch(next);
       });
@@ -160,6 +161,22 @@ class LoadLogStore extends DataStore {
   override getExpiration(): number {
     return UPLOAD_EXPIRY_MS;
   }
+}
+
+/**
+ * The protocol's library ends replies with `end(callback)`, which Node allows; the session middleware wraps `end` and
+ * takes a first argument for contents. Here the callback is taken off before it gets there.
+ */
+function takeCallbackAtEnd(response: Response): void {
+  const end = response.end.bind(response) as (...values: unknown[]) => Response;
+  response.end = ((...values: unknown[]) => {
+    const callback = values.at(-1);
+    if (typeof callback !== 'function') return end(...values);
+    response.once('finish', () => {
+      callback();
+    });
+    return end(...values.slice(0, -1));
+  }) as Response['end'];
 }
 
 function keyOf(log: LoadLog): StorageKey {

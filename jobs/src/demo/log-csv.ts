@@ -13,12 +13,14 @@ export function csvHeader(style: CsvStyle): string {
   return ['time', ...style.columns, ...(style.wind ? ['wind_kn'] : [])].join(',') + '\n';
 }
 
-/** One line of a log; a null load is an empty cell. */
+/** One line of a log; a null load is an empty cell, and words stand as they are. */
 export function csvLine(
-  row: Omit<HistoryRow, 'loads'> & { loads: readonly (number | null)[] },
+  row: Omit<HistoryRow, 'loads'> & { loads: readonly (number | string | null)[] },
   style: CsvStyle,
 ): string {
-  const cells = row.loads.map((load) => (load === null ? '' : load.toFixed(style.decimals)));
+  const cells = row.loads.map((load) =>
+    typeof load === 'number' ? load.toFixed(style.decimals) : (load ?? ''),
+  );
   if (style.wind) cells.push(row.windKn.toFixed(1));
   return `${isoSeconds(row.timeMs)},${cells.join(',')}\n`;
 }
