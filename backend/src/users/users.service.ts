@@ -61,9 +61,11 @@ export class UsersService {
     user.sessionsValidFrom = this.clock.now();
     user.updatedAt = this.clock.now();
     await this.em.flush();
-    await this.em.execute(`delete from session where sess -> 'passport' -> 'user' ->> 'userId' = ?`, [
-      user.id,
-    ]);
+    // The session of this request is left to the store, which would wait for our lock on its row.
+    await this.em.execute(
+      `delete from session where sess -> 'passport' -> 'user' ->> 'userId' = ? and sid <> ?`,
+      [user.id, request.sessionID],
+    );
     await this.audit.record(this.em, {
       action: 'user.password-changed',
       subjectKind: 'user',
