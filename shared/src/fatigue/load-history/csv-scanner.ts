@@ -83,6 +83,8 @@ export class CsvScanner {
   /** Inside a row that was given up: nothing counts before the next line end. */
   private discarding = false;
   private quotesMatter = true;
+  /** Complaints about the row being read; a row that has to be read again must not complain twice. */
+  private readonly complaints: (() => void)[] = [];
   /** Reading the last row of a table that does not end with a line end. */
   private cutShort = false;
 
@@ -252,6 +254,7 @@ export class CsvScanner {
           } else {
             if (!this.slowNumber(bytes, at, end, kind - 1)) {
               this.line = lineBefore;
+              this.settle(false);
               this.filled = row;
               return rowStart;
             }
@@ -264,6 +267,7 @@ export class CsvScanner {
           if (byte === QUOTE && this.quotesMatter) {
             if (!this.quotedCell(bytes, at, end)) {
               this.line = lineBefore;
+              this.settle(false);
               this.filled = row;
               return rowStart;
             }
@@ -275,6 +279,7 @@ export class CsvScanner {
         } else {
           if (!this.timeCell(bytes, at, end)) {
             this.line = lineBefore;
+            this.settle(false);
             this.filled = row;
             return rowStart;
           }
@@ -293,6 +298,7 @@ export class CsvScanner {
         if (column < lastWanted) this.short(row, column, at + 1 >= end);
       } else if (!this.skipRest(bytes, at, end)) {
         this.line = lineBefore;
+        this.settle(false);
         this.filled = row;
         return rowStart;
       } else {
@@ -300,6 +306,7 @@ export class CsvScanner {
       }
       if (bytes[at] === CR && lineEnd === LF) at++;
       at++;
+      if (this.complaints.length > 0) this.settle(true);
       if (at - rowStart > LONGEST_ROW_BYTES) this.trouble.endlessRow(this.line);
       else if (++row === BLOCK_ROWS) {
         this.filled = row;
@@ -311,6 +318,17 @@ export class CsvScanner {
     return at;
   }
 
+  /** Keeps a complaint until the row is complete. */
+  private complain(about: (line: number) => void): void {
+    const { line } = this;
+    this.complaints.push(() => about(line));
+  }
+
+  private settle(complete: boolean): void {
+    if (complete) for (const complaint of this.complaints) complaint();
+    this.complaints.length = 0;
+  }
+
   /** Fills the wanted cells a row does not have; `column` is its last one. */
   private short(row: number, column: number, isLast: boolean): void {
     const cut = this.cutShort && isLast;
@@ -319,7 +337,7 @@ export class CsvScanner {
       if (this.kinds[c] > 0) this.values[this.kinds[c] - 1][row] = NaN;
       else if (this.kinds[c] < 0) this.timesMs[row] = NaN;
     }
-    this.trouble.shortRow(this.line, cut ? column : column + 1, cut);
+    this.complain((line) => this.trouble.shortRow(line, cut ? column : column + 1, cut));
   }
 
   /** Passes over the cells behind the last wanted one, to the line end. */
@@ -385,7 +403,7 @@ export class CsvScanner {
     if (this.manyDigits(bytes, from)) return true;
     const text = this.cellText(bytes, from);
     const value = parseLoadText(text, this.layout.decimalComma);
-    if (value === null) this.trouble.unreadableCell(place, this.line, text);
+    if (value === null) this.complain((line) => this.trouble.unreadableCell(place, line, text));
     this.cellValue = value ?? NaN;
     return true;
   }
@@ -430,7 +448,7 @@ export class CsvScanner {
     const text = this.cellText(bytes, from);
     const parsed = parseTimeText(text, time.format);
     if (parsed === null) {
-      this.trouble.unreadableTime(this.line, text);
+      this.complain((line) => this.trouble.unreadableTime(line, text));
       this.cellValue = NaN;
     } else {
       this.cellValue = parsed.ms - (parsed.hasOffset ? 0 : time.naiveOffsetMinutes * 60_000);

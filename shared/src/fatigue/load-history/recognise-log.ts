@@ -171,10 +171,9 @@ function tableOf(lines: string[], delimiter: string, knownComma: boolean | undef
   const cells = lines.map((line) => splitTableLine(line, delimiter));
   const decimalComma = knownComma ?? (delimiter !== ',' && commaDecimals(cells));
   const isRow = (line: string[]) => isRowOfFigures(line, decimalComma);
+  const rows = cells.filter(isRow);
   const widths = new Map<number, number>();
-  for (const line of cells) {
-    if (isRow(line)) widths.set(line.length, (widths.get(line.length) ?? 0) + 1);
-  }
+  for (const row of rows) widths.set(row.length, (widths.get(row.length) ?? 0) + 1);
   let width = 1;
   let lineCount = 0;
   for (const [size, count] of widths) {
@@ -184,7 +183,12 @@ function tableOf(lines: string[], delimiter: string, knownComma: boolean | undef
     }
   }
   const firstRow = cells.findIndex((line) => line.length >= Math.max(1, width - 1) && isRow(line));
-  return { delimiter, decimalComma, cells, firstRow, width, score: lineCount * (width > 1 ? width : 0.5) };
+  // The right delimiter leaves cells that are figures as a whole, below as many names.
+  let score = 0;
+  for (const row of rows) if (row.length === width) score += figuresIn(row, decimalComma);
+  const above = cells.slice(0, Math.max(0, firstRow)).filter((line) => line.some((cell) => cell !== ''));
+  if (above.length > 0 && above[above.length - 1].length !== width) score /= 3;
+  return { delimiter, decimalComma, cells, firstRow, width, score };
 }
 
 function commaDecimals(cells: string[][]): boolean {
@@ -200,14 +204,18 @@ function commaDecimals(cells: string[][]): boolean {
 }
 
 function isRowOfFigures(line: string[], decimalComma: boolean): boolean {
-  let filled = 0;
+  const figures = figuresIn(line, decimalComma);
+  return figures > 0 && figures * 2 >= line.filter((cell) => cell !== '').length;
+}
+
+/** Cells that are wholly a number or a time. */
+function figuresIn(line: string[], decimalComma: boolean): number {
   let figures = 0;
   for (const cell of line) {
     if (cell === '') continue;
-    filled++;
     if (parseLoadText(cell, decimalComma) !== null || parseTimeText(cell, 'iso') !== null) figures++;
   }
-  return figures > 0 && figures * 2 >= filled;
+  return figures;
 }
 
 /** The header is the nearest line of names above the first row; a line of units may stand between them. */

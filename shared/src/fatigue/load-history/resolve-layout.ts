@@ -34,11 +34,12 @@ export interface ResolvedLayout {
  * @throws LogConfigError when the log is no text table, or a column is missing, ambiguous or not a time
  */
 export function resolveLayout(head: Uint8Array, config: LoadLogConfig): ResolvedLayout {
-  const recognition = recogniseLog(head, config);
+  let recognition = recogniseLog(head, config);
   if (recognition.encoding === 'binary' || recognition.encoding === 'utf-16') {
     throw new LogConfigError(recognition.problems[0].message);
   }
   const { columns, delimiter, skipLines } = tableWith(head, recognition, config);
+  if (delimiter !== recognition.delimiter) recognition = recogniseLog(head, { ...config, delimiter });
   const places: number[] = [];
   const channelPlaces: number[] = [];
   const otherUnit = new Map<number, string>();

@@ -92,7 +92,7 @@ export class SignalWatch {
     }
     this.endSame(this.rowsBefore, NaN, sampleRateHz);
     for (const run of this.stuckRuns) {
-      if (!others.some((other) => other.movedWithin(run.from, run.to))) continue;
+      if (!others.some((other) => other.movedWithin(run.from + STRIDE, run.to - STRIDE))) continue;
       this.findings.note('stuck', { column, line: run.line, ms: run.fromMs, untilMs: run.toMs });
     }
   }

@@ -1,4 +1,4 @@
-import { emptyCycleTable } from './cycle-table.js';
+import { emptyCycleTable, sortedOrder } from './cycle-table.js';
 import type { CycleTable } from './load-spectrum.js';
 
 /** A tile is 4 by 4 bins: its counts are one cache line. */
@@ -289,9 +289,7 @@ class WideBins {
 /** Distinct cycles in any order, sorted by (low, high). */
 function sortedTable(low: Float64Array, high: Float64Array, count: Float64Array): CycleTable {
   const size = low.length;
-  const order = new Uint32Array(size);
-  for (let i = 0; i < size; i++) order[i] = i;
-  order.sort((a, b) => low[a] - low[b] || high[a] - high[b]);
+  const order = sortedOrder(low, high);
   const table = { low: new Float64Array(size), high: new Float64Array(size), count: new Float64Array(size) };
   for (let n = 0; n < size; n++) {
     const i = order[n];

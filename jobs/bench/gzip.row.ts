@@ -1,0 +1,58 @@
+import { createReadStream, createWriteStream, existsSync, renameSync } from 'node:fs';
+import { pipeline } from 'node:stream/promises';
+import { createGunzip, createGzip } from 'node:zlib';
+import { damageOfCounts } from '@stayledger/shared/fatigue/damage/damage-of-counts';
+import { LoadLogCounter } from '@stayledger/shared/fatigue/load-history/load-log-counter';
+import { astmCounts } from '@stayledger/shared/fatigue/rainflow/astm-counts';
+import type { BenchRow } from './bench-row.js';
+import { LOG_CONFIG } from './log-config.js';
+import { makeLogFile } from './make-log-file.js';
+import { alternate } from './measure.js';
+import { DETAIL, expectSame } from './slow-damage.js';
+import { slowLogDamage } from './slow-log-damage.js';
+
+const ROWS = 1_000_000;
+const PIECE = 1 << 18;
+
+/** A compressed log to damage; Node inflates on a thread of its own while this one counts. */
+export const gzipRow: BenchRow = {
+  values: [
+    {
+      name: 'gzOverInflate',
+      what: 'time of .csv.gz to damage over inflating alone',
+      better: 'lower',
+      reach: 1.6,
+      ambition: 1.1,
+    },
+  ],
+  async run() {
+    const plain = makeLogFile(ROWS);
+    const path = `${plain}.gz`;
+    if (!existsSync(path)) {
+      await pipeline(createReadStream(plain), createGzip(), createWriteStream(`${path}.part`));
+      renameSync(`${path}.part`, path);
+    }
+    let damages: number[] = [];
+    const times = await alternate({
+      inflate: async () => {
+        let size = 0;
+        for await (const chunk of inflated(path)) size += chunk.length;
+        if (size === 0) throw new Error('nothing inflated');
+      },
+      count: async () => {
+        const counter = new LoadLogCounter(LOG_CONFIG);
+        for await (const chunk of inflated(path)) counter.push(chunk);
+        damages = counter
+          .finish()
+          .channels.map(({ spectrum }) => damageOfCounts(astmCounts(spectrum), DETAIL));
+      },
+    });
+    const slow = await slowLogDamage(plain, ROWS);
+    slow.forEach((damage, i) => expectSame(`load column ${i + 1}`, damages[i], damage));
+    return { gzOverInflate: times.count / times.inflate };
+  },
+};
+
+function inflated(path: string): AsyncIterable<Uint8Array> {
+  return createReadStream(path, { highWaterMark: PIECE }).pipe(createGunzip({ chunkSize: PIECE }));
+}
