@@ -1,5 +1,5 @@
 import type { Browser } from 'playwright-core';
-import { afterAll, beforeAll, describe, expect, inject, it } from 'vitest';
+import { afterAll, afterEach, beforeAll, describe, expect, inject, it } from 'vitest';
 import { demoSignIns, newVisitor, openBrowser, screenshot, settled, type Visitor } from './harness/browser';
 import { choose } from './harness/fields';
 import { syntheticLog } from './harness/synthetic-log';
@@ -16,6 +16,10 @@ describe('a load log in, a date out', () => {
   beforeAll(async () => {
     browser = await openBrowser();
     visitor = await newVisitor(browser, inject('baseUrl'));
+  });
+  afterEach(async ({ task }) => {
+    if (task.result?.state === 'fail')
+      await screenshot(visitor.page, `failed-${task.name}`.replaceAll(' ', '-'));
   });
   afterAll(async () => {
     await browser?.close();
@@ -49,13 +53,14 @@ describe('a load log in, a date out', () => {
     await choose(page, 'Side', 'Port');
     await page.getByRole('button', { name: 'Add position' }).click();
 
-    await choose(page, 'Construction', '1x19 stainless strand');
+    await choose(page, 'Construction', '1x19 strand, stainless 316');
     await choose(page, 'Diameter', '8 mm');
-    await choose(page, 'Upper terminal', 'Swaged');
-    await choose(page, 'Lower terminal', 'Swaged');
+    await choose(page, 'Upper terminal', 'Swaged terminal');
+    await choose(page, 'Lower terminal', 'Swaged terminal');
     await page.getByLabel('Fitted on').fill('2024-04-10');
     await page.getByRole('button', { name: 'Fit this part' }).click();
-    await page.getByRole('heading', { level: 1, name: 'Cap shroud, port' }).waitFor();
+    await page.waitForURL(/\/parts\/[^/]+$/);
+    await page.getByRole('heading', { level: 1, name: 'Cap shroud, port', exact: true }).waitFor();
     await settled(page);
     await screenshot(page, 'path-2-part-before-any-log');
     const partAddress = new URL(page.url()).pathname;
@@ -112,7 +117,7 @@ describe('a load log in, a date out', () => {
 
     // Nothing is in the ledger before the click.
     const accounts = page.getByRole('table', { name: 'Allowance used before and after this log' });
-    await accounts.getByText('Cap shroud, port').waitFor();
+    await accounts.getByRole('link', { name: 'Cap shroud, port' }).waitFor();
     await page.getByRole('button', { name: 'Post to ledger' }).click();
     await page.getByText(/^Posted by/).waitFor();
 
@@ -152,7 +157,7 @@ describe('a load log in, a date out', () => {
   it('notices the same file and does not post it twice', async () => {
     const { page } = visitor;
     await page.goto('/fleet');
-    await page.getByRole('link', { name: VESSEL }).first().click();
+    await page.getByRole('table', { name: 'Vessels' }).getByRole('link', { name: VESSEL }).click();
     await page.getByRole('link', { name: 'Loads', exact: true }).click();
     await page.getByRole('link', { name: 'Add load log' }).click();
     await page.getByLabel('Drop a load log here, or choose it').setInputFiles({
@@ -178,7 +183,7 @@ describe('a load log in, a date out', () => {
   it('says what is wrong with a file that is no load log', async () => {
     const { page } = visitor;
     await page.goto('/fleet');
-    await page.getByRole('link', { name: VESSEL }).first().click();
+    await page.getByRole('table', { name: 'Vessels' }).getByRole('link', { name: VESSEL }).click();
     await page.getByRole('link', { name: 'Loads', exact: true }).click();
     await page.getByRole('link', { name: 'Add load log' }).click();
     await page.getByLabel('Drop a load log here, or choose it').setInputFiles({

@@ -109,8 +109,11 @@ export async function screenshot(page: Page, name: string): Promise<void> {
   await page.screenshot({ path: join(SCREENSHOTS, `${name}.png`), fullPage: true });
 }
 
-/** Waits until the page has nothing more to fetch and shows no sign of loading. */
+/** Waits until the page has nothing more to fetch and no part of it says that it is loading. */
 export async function settled(page: Page): Promise<void> {
   await page.waitForLoadState('networkidle');
-  await page.waitForFunction(() => document.querySelector('[aria-busy="true"]') === null);
+  await page.waitForFunction(
+    () =>
+      ![...document.querySelectorAll('[role="status"]')].some((status) => status.textContent.includes('…')),
+  );
 }

@@ -17,7 +17,7 @@ function loadKn(second: number, column: number): number {
   const wave = Math.sin((2 * Math.PI * second) / WAVE_PERIOD_S + column);
   const swell = Math.sin((2 * Math.PI * second) / 311 + 2 * column);
   const inSquall = second % SQUALL_EVERY_S < SQUALL_S;
-  return 9 + (inSquall ? 5 : 0) + (inSquall ? 5 : 2.5) * wave + 1.2 * swell;
+  return 6 + (inSquall ? 2 : 0) + (inSquall ? 2.4 : 1.1) * wave + 0.8 * swell;
 }
 
 /** One row per second. */

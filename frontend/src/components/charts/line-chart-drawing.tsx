@@ -6,7 +6,8 @@ import { logAxis } from './log-axis';
 
 /** Days are 'YYYY-MM-DD', instants epoch milliseconds, numbers plain. */
 export type ChartX = string | number;
-export type LineStroke = 'solid' | 'dashed' | 'dotted' | 'rule';
+/** `none` leaves the points alone: values that no line joins, such as counts per range. */
+export type LineStroke = 'solid' | 'dashed' | 'dotted' | 'rule' | 'none';
 
 export interface ChartSeries {
   id: string;
@@ -51,6 +52,7 @@ export interface NivoSeries extends LineSeries {
   id: string;
   label: string;
   stroke: LineStroke;
+  showPoints: boolean;
   data: { x: number; y: number | null }[];
 }
 
@@ -80,6 +82,7 @@ export function LineChartDrawing({
     id: one.id,
     label: one.label,
     stroke: one.stroke ?? 'solid',
+    showPoints: one.showPoints ?? false,
     data: one.points.map((point) => ({ x: toNumber(point.x), y: point.y })),
   }));
   const inkOf = (id: string) => inks[series.findIndex((one) => one.id === id) % inks.length];
@@ -87,7 +90,6 @@ export function LineChartDrawing({
   const logX = xScale === 'log' ? logAxis(data.flatMap((one) => one.data.map((point) => point.x))) : null;
   const logY =
     yScale === 'log' ? logAxis(data.flatMap((one) => one.data.map((point) => point.y ?? 0))) : null;
-  const pointsShown = new Set(series.filter((one) => one.showPoints).map((one) => one.id));
 
   return (
     <ResponsiveLine<NivoSeries>
@@ -127,11 +129,7 @@ export function LineChartDrawing({
         legendOffset: -54,
         legendPosition: 'middle',
       }}
-      enablePoints={pointsShown.size > 0}
-      pointSize={6}
-      pointColor={colours.sheet}
-      pointBorderWidth={1.5}
-      pointBorderColor={{ from: 'seriesColor' }}
+      enablePoints={false}
       animate={false}
       useMesh
       enableCrosshair
@@ -153,7 +151,7 @@ export function LineChartDrawing({
         ...layersBelow,
         'markers',
         strokedLines,
-        ...(pointsShown.size > 0 ? (['points'] as const) : []),
+        pointMarks,
         ...layersAbove,
         'crosshair',
         'mesh',
@@ -173,12 +171,14 @@ const DASHES: Record<LineStroke, string | undefined> = {
   dashed: '6 4',
   dotted: '1 4',
   rule: undefined,
+  none: undefined,
 };
 
 /** Lines told apart by their stroke, so that colour never carries the meaning alone. */
 const strokedLines: LineCustomSvgLayer<NivoSeries> = ({ data, series, lineGenerator, xScale, yScale }) =>
   series.map((one) => {
     const stroke = data.find((given) => given.id === one.id)?.stroke ?? 'solid';
+    if (stroke === 'none') return null;
     const places = one.data.flatMap(({ data: { x, y } }) =>
       y === null ? [] : [{ x: xScale(x), y: yScale(y) }],
     );
@@ -195,3 +195,26 @@ const strokedLines: LineCustomSvgLayer<NivoSeries> = ({ data, series, lineGenera
       />
     );
   });
+
+const POINT_PX = 7;
+
+/** Small squares at the values of the series that ask for them, and of no other. */
+const pointMarks: LineCustomSvgLayer<NivoSeries> = ({ data, series, xScale, yScale }) =>
+  series
+    .filter((one) => data.find((given) => given.id === one.id)?.showPoints)
+    .flatMap((one) =>
+      one.data.map(({ data: { x, y } }, index) =>
+        y === null ? null : (
+          <rect
+            key={`${one.id}-${index}`}
+            x={xScale(x) - POINT_PX / 2}
+            y={yScale(y) - POINT_PX / 2}
+            width={POINT_PX}
+            height={POINT_PX}
+            fill="var(--sheet)"
+            stroke={one.color}
+            strokeWidth={1.5}
+          />
+        ),
+      ),
+    );

@@ -49,7 +49,7 @@ export function CyclesChart({ life }: { life: PartLifeDto }) {
         {
           id: 'counted',
           label: 'Counted',
-          stroke: 'dotted',
+          stroke: 'none',
           showPoints: true,
           points: counted.map((bin) => ({ x: bin.cycles, y: middle(bin) })),
         },
