@@ -1,4 +1,5 @@
 import { addMonths } from '../fatigue/life/days.js';
+import type { FirmInput } from './firm-input.js';
 import { DEFAULT_CONTINGENCY_SHARE, DEFAULT_ORDER_MARGIN_DAYS, NO_DECISIONS } from './plan-input.js';
 import type { PlanInput, PlanTask, PlanWindow, VisitKind, WorkTerms } from './plan-input.js';
 
@@ -127,4 +128,40 @@ function inventedWindows(fromOn: string, count: number): PlanWindow[] {
       kinds: winter ? ['aloft', 'mast-out-afloat', 'mast-out-ashore'] : ['aloft', 'mast-out-afloat'],
     };
   });
+}
+
+/**
+ * An invented firm: vessels of {@link inventedVessel}, each away in some of the yard's windows, and a yard with berths and
+ * hours per window in proportion to their number.
+ *
+ * @param settings as for one vessel, with the number of vessels and the room per vessel and window
+ */
+export function inventedFirm(
+  settings: InventedVesselSettings & {
+    vesselCount: number;
+    hoursPerVessel: number;
+    berthsPerVessel: number;
+    lateDayCostMinor: number;
+  },
+): FirmInput {
+  const { random, vesselCount } = settings;
+  const vessels = Array.from({ length: vesselCount }, (_, at) => {
+    const input = inventedVessel(settings);
+    // One window in eight is lost to a charter, a passage or a lay-up elsewhere.
+    const windows = input.windows.filter(() => random() >= 0.125);
+    return { vesselId: `vessel-${at}`, name: `Vessel ${at}`, input: { ...input, windows } };
+  });
+  return {
+    lateDayCostMinor: settings.lateDayCostMinor,
+    vessels,
+    windows: inventedWindows(settings.windowsFromOn, settings.windowCount).map(({ id, kinds }) => ({
+      id,
+      riggerHours: Math.round(vesselCount * settings.hoursPerVessel),
+      berths: Object.fromEntries(
+        kinds
+          .filter((kind) => kind !== 'aloft')
+          .map((kind) => [kind, Math.max(1, Math.round(vesselCount * settings.berthsPerVessel))]),
+      ),
+    })),
+  };
 }

@@ -33,7 +33,17 @@ export interface ProgramSolution {
   rowDuals: Float64Array | null;
 }
 
+/** A program without whole columns that is solved again and again at other costs, each time from where it stood. */
+export interface OpenProgram {
+  /** Null where no solution satisfies the rows. */
+  solve(costs: Float64Array): { objective: number; values: Float64Array } | null;
+  /** Frees what the solver holds. */
+  close(): void;
+}
+
 /** The solver the planner is given. Pure code holds no solver of its own, so that it runs wherever one can be loaded. */
 export interface ProgramSolver {
   solve(program: MixedIntegerProgram, limits: SolveLimits): ProgramSolution;
+  /** Opens the relaxation of a program: its columns need not be whole. */
+  openRelaxed(program: MixedIntegerProgram): OpenProgram;
 }

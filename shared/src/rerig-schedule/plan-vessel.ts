@@ -107,15 +107,15 @@ function planOf(model: VesselModel, solution: VesselSolution, remarks: string[])
   // Plans cost whole minor units, so a proven bound may be rounded up to the next one (less a solver's tolerance).
   const provenMinor = Math.ceil(solution.bound * MINOR_PER_PROGRAM_UNIT - 1e-3 * MINOR_PER_PROGRAM_UNIT);
   const boundMinor = Math.max(0, Math.min(totalMinor, provenMinor));
-  return readPlan(
-    model,
-    solution.choice,
-    {
+  return {
+    ...readPlan(model, solution.choice, lateTasksOf(model, solution.choice), [
+      ...remarks,
+      ...solution.built.impossible,
+    ]),
+    proof: {
       ended: solution.ended,
       boundMinor,
       gap: totalMinor === 0 ? 0 : (totalMinor - boundMinor) / totalMinor,
     },
-    lateTasksOf(model, solution.choice),
-    [...remarks, ...solution.built.impossible],
-  );
+  };
 }

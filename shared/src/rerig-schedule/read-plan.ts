@@ -1,6 +1,6 @@
 import { dayOfNumber } from '../fatigue/life/days.js';
 import type { VisitKind } from './plan-input.js';
-import type { LateTask, PlanProof, PlannedTask, PlannedVisit, VesselPlan } from './vessel-plan.js';
+import type { LateTask, PlannedTask, PlannedVisit, VesselPlan } from './vessel-plan.js';
 import type { ModelTask, OfferedVisit, OfferedWork, VesselModel } from './vessel-model.js';
 
 /** What a solution settles: windows and tasks by their number in the model. */
@@ -24,10 +24,9 @@ export interface DutyOutcome {
 export function readPlan(
   model: VesselModel,
   choice: VesselChoice,
-  proof: PlanProof,
   lateTasks: LateTask[],
   remarks: string[],
-): VesselPlan {
+): Omit<VesselPlan, 'proof'> {
   const outcomes = dutyOutcomes(model, choice);
   const visits = [...choice.visits]
     .sort((one, other) => one.window - other.window)
@@ -42,7 +41,6 @@ export function readPlan(
     lateDays: sum(outcomes.map(({ lateDays }) => lateDays)),
     lateTasks,
     withoutDate: model.tasks.filter(({ dueDay }) => dueDay === null).map(({ task }) => task.name),
-    proof,
     remarks,
   };
 }

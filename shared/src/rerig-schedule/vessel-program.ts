@@ -154,7 +154,7 @@ export function vesselProgram(model: VesselModel, settings: ProgramSettings): Ve
  * program about four times as fast.
  */
 function coupledTasks(model: VesselModel, settings: ProgramSettings): Set<number> {
-  const all = settings.room !== undefined || settings.atMost !== undefined || settings.lateAllowed === true;
+  const all = settings.room !== undefined || settings.atMost !== undefined;
   const coupled = new Set<number>();
   const byId = new Map(model.tasks.map(({ task }, index) => [task.id, index]));
   model.tasks.forEach(({ task, dueDay, againAfterDays, doneDays }, index) => {
@@ -245,9 +245,11 @@ function addRoom(
       const offered = model.tasks[work.taskIndex].work.find(({ kind }) => kind === work.kind)!;
       row.push([work.column, offered.hours]);
     }
+    // A visit that stands takes its hours even where others have left none.
+    const lockedHours = offers.reduce((sum, offer) => sum + (offer.locked ? offer.hours : 0), 0);
     builder.addRow(
       -Infinity,
-      hours,
+      Math.max(hours, lockedHours),
       row.filter(([, hoursOfColumn]) => hoursOfColumn > 0),
     );
   });
