@@ -102,6 +102,8 @@ export async function createTestDatabase(): Promise<TestDatabase> {
     await client.end();
   }
   const admin = new Pool({ connectionString: urlOf(name), max: 2 });
+  // The database is dropped by force, which ends connections that were just being closed.
+  admin.on('error', () => undefined);
   return {
     name,
     appUrl: urlOf(name, APP),
