@@ -1,4 +1,4 @@
-import { usagePlanSchema, type StateUsagePlanInput } from '@stayledger/shared/contracts/life';
+import { usagePlanReplySchema, type StateUsagePlanInput } from '@stayledger/shared/contracts/life';
 import {
   vesselSchema,
   type CreateVesselInput,
@@ -15,5 +15,5 @@ export function updateVessel(vesselId: string, input: UpdateVesselInput) {
 }
 
 export function stateUsagePlan(vesselId: string, input: StateUsagePlanInput) {
-  return apiSend('PUT', `/vessels/${vesselId}/usage-plan`, usagePlanSchema, { body: input });
+  return apiSend('PUT', `/vessels/${vesselId}/usage-plan`, usagePlanReplySchema, { body: input });
 }
