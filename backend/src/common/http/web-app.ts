@@ -21,7 +21,8 @@ export function webApp(folder: string): RequestHandler {
     const file = fileOf(root, request.path);
     if (file) return sendAsset(file, request, response);
     // An asset of an older build is gone; the page in its place would be taken for a script.
-    if (extname(request.path) !== '' || request.path.startsWith('/assets/')) return next();
+    const isPage = request.path === '/index.html' || extname(request.path) === '';
+    if (!isPage || request.path.startsWith('/assets/')) return next();
     sendPage(root, response, next);
   };
 }
