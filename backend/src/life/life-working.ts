@@ -14,6 +14,8 @@ interface CountedCycle {
   count: number;
   day: number;
   damage: number;
+  /** The low is the slack part before its first log, not a recorded load. */
+  fromSlack: boolean;
 }
 
 /** What the working is shown for. */
@@ -64,7 +66,13 @@ function cycleSteps(input: WorkingInput, cycle: CountedCycle): WorkingStepDto[] 
       equation: 'dF = F_high - F_low',
       inputs: [
         value('F_high', 'load at the crest of the cycle', cycle.highKn, 'kN', day),
-        value('F_low', 'load at its trough', cycle.lowKn, 'kN', day),
+        value(
+          'F_low',
+          'load at its trough',
+          cycle.lowKn,
+          'kN',
+          cycle.fromSlack ? 'the slack part, before its first log' : day,
+        ),
       ],
       result: { symbol: 'dF', value: cycle.highKn - cycle.lowKn, unit: 'kN' },
       source: ASTM,
@@ -209,9 +217,9 @@ function value(symbol: string, meaning: string, number: number, unit: string, fr
 function mostDamagingCycle(spectrum: LoadSpectrum, evaluator: CycleEvaluator): CountedCycle | null {
   const toKn = spectrum.step > 0 ? spectrum.step : 1;
   let worst: CountedCycle | null = null;
-  const consider = (lowKn: number, highKn: number, count: number, day: number): void => {
+  const consider = (lowKn: number, highKn: number, count: number, day: number, fromSlack = false): void => {
     const damage = count * evaluator.damageOf(evaluator.rangeOf(lowKn, highKn), lowKn, highKn);
-    if (damage > (worst?.damage ?? 0)) worst = { lowKn, highKn, count, day, damage };
+    if (damage > (worst?.damage ?? 0)) worst = { lowKn, highKn, count, day, damage, fromSlack };
   };
   for (const { day, cycles } of spectrum.days) {
     cycles.low.forEach((low, i) => consider(low * toKn, cycles.high[i] * toKn, cycles.count[i], day));
@@ -220,7 +228,8 @@ function mostDamagingCycle(spectrum: LoadSpectrum, evaluator: CycleEvaluator): C
   for (let i = 1; i < residue.length; i++) {
     const rises = residue[i] > residue[i - 1];
     const [low, high] = rises ? [residue[i - 1], residue[i]] : [residue[i], residue[i - 1]];
-    consider(low * toKn, high * toKn, 0.5, residueDay[rises ? i : i - 1]);
+    // The history begins with the turning point at zero load.
+    consider(low * toKn, high * toKn, 0.5, residueDay[rises ? i : i - 1], i === 1 && low === 0);
   }
   return worst;
 }

@@ -155,10 +155,15 @@ function highestByDay({ days, residue, residueDay, step }: LoadSpectrum): Map<nu
   const toKn = step > 0 ? step : 1;
   const highest = new Map<number, number>();
   const see = (day: number, level: number) =>
-    highest.set(day, Math.max(highest.get(day) ?? -Infinity, level * toKn));
+    highest.set(day, Math.max(highest.get(day) ?? -Infinity, decimal(level * toKn)));
   for (const { day, cycles } of days) for (const level of cycles.high) see(day, level);
   residue.forEach((level, i) => see(residueDay[i], level));
   return highest;
+}
+
+/** Level times step without the last digits' dust (20.900000000000002); a load has never so many figures. */
+function decimal(loadKn: number): number {
+  return Number(loadKn.toPrecision(12));
 }
 
 function worstDaysOf({ result, dff }: Governing, logs: readonly LogOfPart[]): PartLifeDto['worstDays'] {

@@ -124,7 +124,7 @@ export class LogReceiver {
       });
     });
     await this.storage.discard(key);
-    this.logger.log({ message: 'cleared away a half-received file', loadLogId: key.loadLogId });
+    this.logger.log(`cleared away the half-received file of load log ${key.loadLogId}`);
   }
 
   private logOf(key: StorageKey): Promise<LoadLog | null> {

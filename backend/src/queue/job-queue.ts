@@ -61,7 +61,7 @@ export class JobQueue implements EventSubscriber {
       await this.queue.add(COUNT_LOAD_LOG, { jobId }, { jobId });
     } catch (error) {
       const reason = error instanceof Error ? error.message : String(error);
-      this.logger.warn({ message: 'the queue is not reachable; the sweep will find the job', jobId, reason });
+      this.logger.warn(`the queue is not reachable, the sweep will find job ${jobId}: ${reason}`);
     }
   }
 }

@@ -38,7 +38,7 @@ export class JobSweep implements OnApplicationBootstrap, BeforeApplicationShutdo
     this.sweeping ??= this.sweepOnce()
       .catch((error: unknown) => {
         const reason = error instanceof Error ? error.message.split('\n')[0] : String(error);
-        this.logger.warn({ message: 'could not look for waiting jobs', reason });
+        this.logger.warn(`could not look for waiting jobs: ${reason}`);
       })
       .finally(() => {
         this.sweeping = null;

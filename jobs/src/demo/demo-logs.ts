@@ -28,35 +28,41 @@ const RATE_HZ = 1;
 const DECIMALS = 1;
 
 const CUTTER_SENSORS: readonly DemoSensor[] = [
-  sensor('cap-shroud', 'port', { column: 'cap_port_kN', dockKn: 10, at20KnotsKn: 10, perMetreKn: 2.1 }),
+  sensor('cap-shroud', 'port', { column: 'cap_port_kN', dockKn: 10, at20KnotsKn: 7.5, perMetreKn: 1.5 }),
   sensor('cap-shroud', 'starboard', {
     column: 'cap_starboard_kN',
     dockKn: 10,
-    at20KnotsKn: 10,
-    perMetreKn: 2.1,
+    at20KnotsKn: 7.5,
+    perMetreKn: 1.5,
   }),
-  sensor('forestay', 'centre', { column: 'forestay_kN', dockKn: 11, at20KnotsKn: 8, perMetreKn: 1.9 }),
-  sensor('backstay', 'centre', { column: 'backstay_kN', dockKn: 7, at20KnotsKn: 5, perMetreKn: 1.2 }),
+  sensor('forestay', 'centre', { column: 'forestay_kN', dockKn: 11, at20KnotsKn: 6.5, perMetreKn: 1.5 }),
+  sensor('backstay', 'centre', { column: 'backstay_kN', dockKn: 7, at20KnotsKn: 4, perMetreKn: 0.9 }),
 ];
 
 const SLOOP_SENSORS: readonly DemoSensor[] = [
   sensor('cap-shroud', 'port', { column: 'V1 port [kN]', dockKn: 9, at20KnotsKn: 9, perMetreKn: 1.4 }),
+  sensor('cap-shroud', 'starboard', {
+    column: 'V1 starboard [kN]',
+    dockKn: 9,
+    at20KnotsKn: 9,
+    perMetreKn: 1.4,
+  }),
 ];
 
 /** Logs of the charter cutter: one posted, one waiting to be looked at. */
 export function cutterLogs(firstDayOn: string): DemoLog[] {
   const day = (daysAgo: number, hour: number) => startOf(firstDayOn, daysAgo, hour);
   return [
-    log('ternesund-spring-cruise.csv.gz', 'post', CUTTER_SENSORS, [
-      outing(day(47, 7), 7, 13, 0.7, 5.2),
-      outing(day(46, 6), 8, 17, 1.2, 5.8),
-      outing(day(45, 8), 6, 11, 0.5, 4.6),
-      outing(day(43, 6), 9, 21, 1.9, 6.6),
-      outing(day(42, 7), 8, 15, 1.0, 5.5),
+    log('ternesund-cruise.csv.gz', 'post', CUTTER_SENSORS, [
+      outing(day(47, 7), 6, 13, 0.7, 5.2),
+      outing(day(46, 6), 7, 17, 1.2, 5.8),
+      outing(day(45, 8), 5, 11, 0.5, 4.6),
+      outing(day(43, 6), 8, 21, 1.9, 6.6),
+      outing(day(42, 7), 6, 15, 1.0, 5.5),
     ]),
     log('ternesund-last-week.csv.gz', 'wait', CUTTER_SENSORS, [
-      outing(day(6, 7), 5, 14, 0.8, 5.1),
-      outing(day(4, 9), 6, 19, 1.5, 6.1),
+      outing(day(6, 7), 3, 14, 0.8, 5.1),
+      outing(day(4, 9), 4, 19, 1.5, 6.1),
     ]),
   ];
 }
@@ -71,12 +77,13 @@ export function sloopLogs(firstDayOn: string): DemoLog[] {
   ];
 }
 
-/** Cut off at 16.5 kN, stuck for a quarter of an hour, words in place of figures, and two pauses. */
+/** The port sensor cut off at 16.5 kN, stuck for a quarter of an hour, writing words; and two pauses of both. */
 function faultsOf(row: number, loads: readonly number[]): readonly (number | string | null)[] | null {
   if ((row > 3000 && row < 4100) || (row > 9000 && row < 9900)) return null;
-  if (row > 5000 && row < 5900) return loads.map(() => 14.2);
-  if (row % 997 === 0) return loads.map(() => 'ERR');
-  return loads.map((load) => Math.min(load, 16.5));
+  const [port, ...others] = loads;
+  if (row > 5000 && row < 5900) return [14.2, ...others];
+  if (row % 997 === 0) return ['ERR', ...others];
+  return [Math.min(port, 16.5), ...others];
 }
 
 function sensor(kind: string, side: Side, model: Omit<ChannelModel, 'side'>): DemoSensor {

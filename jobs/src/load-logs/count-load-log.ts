@@ -180,7 +180,7 @@ async function keep(deps: CountingDeps, job: HeldJob, begun: Begun, counted: Cou
       toAt: instant(counted.toMs),
       loggedHours: counted.loggedHours,
       sampleRateHz: counted.sampleRateHz,
-      findings: [...counted.findings.map(toDto), ...roundingFindings(begun.config, counted)],
+      findings: [...counted.findings.map(toDto), roundingFinding(begun.config, counted)],
       engineVersion: ENGINE_VERSION,
       failure: null,
       updatedAt: now,
@@ -273,23 +273,26 @@ function toDto(finding: LogFinding): LogFindingDto {
 }
 
 /** Every count on a grid says how fine the grid was and what it can have changed. */
-function roundingFindings({ channels }: LoadLogConfig, counted: Counted): LogFindingDto[] {
-  return counted.channels.map((channel, i) => {
-    const limit = channels[i].limitKn;
-    const against =
-      limit === undefined ? '' : `, 1/${Math.round(limit / channel.step)} of the lowest breaking load`;
-    return {
-      code: 'rounding',
-      severity: 'info',
-      column: channel.column,
-      fromAt: null,
-      toAt: null,
-      line: null,
-      count: 1,
-      message: `Loads were counted in steps of ${channel.step} kN${against}.`,
-      action: `By estimate this changes the damage by ${percent(channel.roundingShare)}.`,
-    };
+function roundingFinding({ channels }: LoadLogConfig, counted: Counted): LogFindingDto {
+  const steps = [...new Set(counted.channels.map(({ step }) => step))].sort((a, b) => a - b);
+  const shares = counted.channels.flatMap(({ step }, i) => {
+    const { limitKn } = channels[i];
+    return limitKn === undefined ? [] : [limitKn / step];
   });
+  const against =
+    shares.length === 0 ? '' : `, 1/${Math.floor(Math.min(...shares))} of the lowest breaking load or finer`;
+  const largest = Math.max(...counted.channels.map(({ roundingShare }) => roundingShare));
+  return {
+    code: 'rounding',
+    severity: 'info',
+    column: null,
+    fromAt: null,
+    toAt: null,
+    line: null,
+    count: counted.channels.length,
+    message: `Loads were counted in steps of ${steps.join(' and ')} kN${against}.`,
+    action: `By estimate this changes the damage by ${percent(largest)}.`,
+  };
 }
 
 function percent(share: number): string {

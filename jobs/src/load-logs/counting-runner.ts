@@ -43,9 +43,9 @@ export class CountingRunner implements BeforeApplicationShutdown {
   private async claimAndCount(jobId: string): Promise<void> {
     const job = await claimJob(this.em.fork(), jobId);
     if (job === null) return;
-    const about = { jobId, loadLogId: job.subjectId, attempt: job.attempts };
+    const about = `job ${jobId}, load log ${job.subjectId}, attempt ${job.attempts}`;
     if (job.attempts > MAX_ATTEMPTS) {
-      this.logger.error({ ...about, message: 'given up' });
+      this.logger.error(`given up: ${about}`);
       await refuse(this.deps(), job, {
         code: 'interrupted',
         message:
@@ -55,20 +55,20 @@ export class CountingRunner implements BeforeApplicationShutdown {
     }
     try {
       await countLoadLog(this.deps(), job, this.stopping.signal);
-      this.logger.log({ ...about, message: 'ended' });
+      this.logger.log(`ended: ${about}`);
     } catch (error) {
       await this.putBack(job, error, about);
     }
   }
 
-  private async putBack(job: HeldJob, error: unknown, about: object): Promise<void> {
+  private async putBack(job: HeldJob, error: unknown, about: string): Promise<void> {
     if (error instanceof LeaseLostError) {
-      this.logger.warn({ ...about, message: 'another worker took over; nothing was written' });
+      this.logger.warn(`another worker took over, nothing was written: ${about}`);
       return;
     }
     const stopped = this.stopping.signal.aborted;
     const reason = error instanceof Error ? `${error.name}: ${error.message.split('\n')[0]}` : String(error);
-    if (!stopped) this.logger.warn({ ...about, message: 'broke off', reason });
+    if (!stopped) this.logger.warn(`broke off: ${about}: ${reason}`);
     try {
       await returnJob(this.em.fork(), job, {
         pauseS: stopped ? 0 : RETRY_PAUSE_S * job.attempts,
@@ -77,7 +77,7 @@ export class CountingRunner implements BeforeApplicationShutdown {
       });
     } catch {
       // The database is away, or the lease was lost: the lease runs out, and the sweep finds the job.
-      this.logger.warn({ ...about, message: 'could not be given back; its lease will run out' });
+      this.logger.warn(`could not be given back, its lease will run out: ${about}`);
     }
   }
 
