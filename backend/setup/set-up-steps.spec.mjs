@@ -8,6 +8,7 @@ import { run, spawnLasting, within } from './child-processes.mjs';
 import { chooseDataFolder, lockDataFolder, openDataFolder, readSecrets } from './data-folder.mjs';
 import { freePortFrom } from './ports.mjs';
 import { serverAccount } from './postgres-cluster.mjs';
+import { followServerLog, forTerminal, openServerLog } from './server-log.mjs';
 
 let folder;
 beforeEach(() => {
@@ -158,5 +159,38 @@ describe('commands', () => {
       stderr: 'err\n',
     });
     expect(await run([path.join(folder, 'nothing')])).toMatchObject({ code: 127 });
+  });
+});
+
+describe('server log', () => {
+  it('is followed from where this start begins, line by line, to the last one', () => {
+    const file = write('server.log', 'of an earlier start\n');
+    const { descriptor, from } = openServerLog(file);
+    const lines = [];
+    const following = followServerLog(file, from, (line) => lines.push(line));
+    fs.writeSync(descriptor, 'first\nsecönd\nunfin');
+    fs.writeSync(descriptor, 'ished');
+    fs.closeSync(descriptor);
+    following.stop();
+    expect(lines).toEqual(['first', 'secönd', 'unfinished']);
+  });
+
+  it('is put aside when it has grown large', () => {
+    const file = write('server.log');
+    fs.truncateSync(file, 21 * 1024 * 1024);
+    const { descriptor, from } = openServerLog(file);
+    fs.closeSync(descriptor);
+    expect(from).toBe(0);
+    expect(fs.statSync(`${file}.1`).size).toBe(21 * 1024 * 1024);
+  });
+
+  it('shows a person what needs one', () => {
+    expect(forTerminal('{"level":"log","message":"counted"}')).toBeNull();
+    expect(forTerminal('stayledger: ready on http://127.0.0.1:3000')).toBeNull();
+    expect(forTerminal('{"level":"warn","message":"disk nearly full","context":"storage"}')).toBe(
+      'warn (storage): disk nearly full',
+    );
+    expect(forTerminal('{"level":"error","message":{"jobId":"1"}}')).toBe('error: {"jobId":"1"}');
+    expect(forTerminal('Error: no module')).toBe('Error: no module');
   });
 });

@@ -9,6 +9,7 @@ import { freePortFrom } from './ports.mjs';
 import { Problem } from './problem.mjs';
 import { openExistingServer, openOwnCluster } from './product-database.mjs';
 import { createProgress } from './progress.mjs';
+import { followServerLog, forTerminal, openServerLog } from './server-log.mjs';
 import { ensureSystemPackages } from './system-packages.mjs';
 
 /**
@@ -113,29 +114,35 @@ async function startServer({ database, folder, secrets, demo, host, port, lock }
   // The server has no business with the owner's rights.
   delete env.DATABASE_OWNER_URL;
   delete env.DATABASE_URL;
+  const logFile = path.join(folder, 'server.log');
+  const log = openServerLog(logFile);
   const server = spawnLasting([process.execPath, path.join(ROOT, 'jobs/dist/all-in-one.js')], {
     cwd: ROOT,
     env,
-    stdio: ['ignore', 'pipe', 'pipe'],
+    stdio: ['ignore', log.descriptor, log.descriptor],
     deathSignal: 'TERM',
   });
+  fs.closeSync(log.descriptor);
   if (server.child.pid) lock.add(server.child.pid);
-  started.push({
-    stop: () => endProcess(server, 'SIGTERM', SERVER_GRACE_MS),
-    hurry: () => server.child.kill('SIGKILL'),
-  });
   let ready;
   const isReady = new Promise((resolve) => {
     ready = resolve;
   });
-  let rest = '';
-  server.child.stdout.on('data', (chunk) => {
-    process.stdout.write(chunk);
-    rest = (rest + chunk).slice(-4096);
-    const address = /stayledger: ready on (\S+)/.exec(rest);
+  const following = followServerLog(logFile, log.from, (line) => {
+    const address = /^stayledger: ready on (\S+)/.exec(line);
     if (address) ready(address[1]);
+    const shown = forTerminal(line);
+    if (shown !== null) progress.write(shown);
   });
-  server.child.stderr.on('data', (chunk) => process.stderr.write(chunk));
+  // Its last lines come before our own about its end.
+  void server.ended.then(() => following.flush());
+  started.push({
+    stop: async () => {
+      await endProcess(server, 'SIGTERM', SERVER_GRACE_MS);
+      following.stop();
+    },
+    hurry: () => server.child.kill('SIGKILL'),
+  });
   const address = await within(
     READY_WITHIN_MS,
     Promise.race([isReady, server.ended.then(() => null), stopAsked.then(() => null)]),
@@ -162,7 +169,7 @@ async function demoSignIns(address) {
   }
 }
 
-async function printWelcome({ address, demo }) {
+async function printWelcome({ address, folder, demo }) {
   const lines = ['', `Stayledger is ready:  ${settings.PUBLIC_URL || address}`];
   const signIns = demo ? await demoSignIns(address) : [];
   if (signIns.length > 0) {
@@ -171,7 +178,7 @@ async function printWelcome({ address, demo }) {
     for (const { role, email, password } of signIns)
       lines.push(`  ${role.padEnd(widest)}  ${email}  ${password}`);
   }
-  lines.push('', 'Ctrl-C stops it.', '');
+  lines.push('', `Its log: ${path.join(folder, 'server.log')}`, 'Ctrl-C stops it.', '');
   progress.write(lines.join('\n'));
 }
 
@@ -238,7 +245,7 @@ async function main() {
     running = await startServer({ ...context, port, lock });
     return port === wantedPort ? '' : `port ${wantedPort} is in use, took ${port}`;
   });
-  await printWelcome({ address: running.address, demo });
+  await printWelcome({ address: running.address, folder, demo });
 
   const ending = await Promise.race([
     stopAsked,
