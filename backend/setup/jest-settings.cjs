@@ -33,4 +33,6 @@ module.exports = {
   transformIgnorePatterns: ['/node_modules/(?!(@tus|srvx|uuid)/)'],
   globalSetup: require.resolve('./jest-database.cjs'),
   maxWorkers: 2,
+  // On two busy cores a password hash or the first request of an application can take seconds.
+  testTimeout: 20_000,
 };
