@@ -45,7 +45,7 @@ describe('a load log in, a date out', () => {
     await page.getByLabel('Build year').fill('2015');
     await choose(page, 'Time zone', 'Europe/Oslo');
     await page.getByRole('button', { name: 'Register vessel' }).click();
-    await page.getByRole('heading', { level: 1, name: VESSEL }).waitFor();
+    await page.getByRole('heading', { level: 1, name: VESSEL, exact: true }).waitFor();
     const vesselAddress = new URL(page.url()).pathname;
 
     await page.getByRole('link', { name: 'Add a position' }).click();
@@ -129,7 +129,7 @@ describe('a load log in, a date out', () => {
     await page.getByRole('link', { name: 'State the planned sailing' }).click();
     await page.getByLabel(/Hours under sail in a year/).fill('400');
     await page.getByRole('button', { name: 'State the plan' }).click();
-    await page.getByRole('heading', { level: 1, name: VESSEL }).waitFor();
+    await page.getByRole('heading', { level: 1, name: VESSEL, exact: true }).waitFor();
 
     await page.goto(partAddress);
     await page.getByText('At the planned sailing, on the rule’s curve.').waitFor();

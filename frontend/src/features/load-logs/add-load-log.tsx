@@ -66,7 +66,7 @@ export function AddLoadLog({ vesselId, zone, positions }: AddLoadLogProps) {
         forgetUpload(log.id);
         return false;
       }
-      uploadManager.start({ loadLogId: log.id, vesselId, file, fingerprint });
+      uploadManager.start({ loadLogId: log.id, vesselId, file, fingerprint, isNew: false });
       await navigate(paths.loadLog.to(log.id));
       return true;
     } catch (error) {
@@ -103,7 +103,7 @@ export function AddLoadLog({ vesselId, zone, positions }: AddLoadLogProps) {
         idempotencyKey,
       ),
     onSuccess: async (log, { file, fingerprint }) => {
-      uploadManager.start({ loadLogId: log.id, vesselId, file, fingerprint });
+      uploadManager.start({ loadLogId: log.id, vesselId, file, fingerprint, isNew: true });
       client.setQueryData(loadLogQueries.detail(log.id).queryKey, log);
       await navigate(paths.loadLog.to(log.id));
     },

@@ -52,7 +52,7 @@ export function ReceivingLog({ log, mayUpload }: { log: LoadLogDto; mayUpload: b
       );
       return;
     }
-    uploadManager.start({ loadLogId: log.id, vesselId: log.vesselId, file, fingerprint });
+    uploadManager.start({ loadLogId: log.id, vesselId: log.vesselId, file, fingerprint, isNew: false });
   }
 
   const sentBytes = Math.max(progress?.sentBytes ?? 0, log.receivedBytes);

@@ -19,6 +19,8 @@ export interface UploadRequest {
   vesselId: string;
   file: File;
   fingerprint: FileFingerprint;
+  /** Nothing of it was sent before, so there is nothing to ask the server about. */
+  isNew: boolean;
 }
 
 const ENDPOINT = '/api/uploads';
@@ -65,15 +67,15 @@ export class UploadManager {
   }
 
   /** Begins, or goes on with, the upload of a log that was announced to the server. */
-  start({ loadLogId, vesselId, file, fingerprint }: UploadRequest): void {
+  start({ loadLogId, vesselId, file, fingerprint, isNew }: UploadRequest): void {
     const running = this.uploads.get(loadLogId);
     if (running?.progress.phase === 'sending' || running?.progress.phase === 'waiting') return;
     rememberUpload({ ...fingerprint, loadLogId, vesselId });
     const upload = new Upload(file, {
       endpoint: ENDPOINT,
-      // The upload's address is made of the log's own id, so it is known without any memory of this browser. When
-      // nothing was sent before, the server does not know the address and the client creates it.
-      uploadUrl: `${ENDPOINT}/${loadLogId}`,
+      // The upload's address is made of the log's own id, so it is known without any memory of this browser. Should
+      // the server not know it after all, the client creates it.
+      uploadUrl: isNew ? null : `${ENDPOINT}/${loadLogId}`,
       metadata: { loadLogId, filename: file.name },
       headers: { 'X-Requested-By': 'stayledger' },
       chunkSize: CHUNK_BYTES,
