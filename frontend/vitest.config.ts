@@ -13,7 +13,8 @@ export default defineConfig({
     env: { TZ: 'Pacific/Chatham' },
     restoreMocks: true,
     unstubGlobals: true,
-    testTimeout: 20_000,
+    // Antd's first drawing in jsdom takes seconds on a busy machine of two cores.
+    testTimeout: 60_000,
     maxWorkers: 2,
   },
 });

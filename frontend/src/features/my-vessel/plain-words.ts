@@ -37,6 +37,9 @@ export function plainDue(
 
 /** Why, in one sentence. */
 export function plainWhy(standing: PartStandingDto): string {
+  if (standing.governingRule === 'calendar' && standing.due === 'overdue') {
+    return 'It has reached the age at which parts of its kind are replaced, whatever they have carried.';
+  }
   if (standing.governingRule === 'calendar') {
     return 'By then it reaches the age at which parts of its kind are replaced, whatever they have carried.';
   }

@@ -2,7 +2,6 @@ import { FORCE_UNITS, type Preferences } from '@stayledger/shared/contracts/auth
 import { updateProfileSchema } from '@stayledger/shared/contracts/users';
 import Form from 'antd/es/form';
 import Radio from 'antd/es/radio';
-import { useState } from 'react';
 import { paths } from '../../app/paths';
 import { ContractFormSheet } from '../../components/forms/contract-form-sheet';
 import { FieldPair } from '../../components/forms/field-pair';
@@ -18,11 +17,16 @@ interface ProfileValues extends Omit<Preferences, 'decimalComma'> {
   decimalMark: 'point' | 'comma';
 }
 
-export function ProfileForm() {
+interface ProfileFormProps {
+  /** Kept by the page: saving makes a new version, and with it a new form. */
+  saved: boolean;
+  onSaved: (saved: boolean) => void;
+}
+
+export function ProfileForm({ saved, onSaved }: ProfileFormProps) {
   const { user } = useSession();
   const refreshSession = useRefreshSession();
   const { choose } = useColourMode();
-  const [saved, setSaved] = useState(false);
   const contractForm = useContractForm({
     contract: updateProfileSchema,
     toInput: ({ name, decimalMark, ...preferences }: ProfileValues) => ({
@@ -31,14 +35,14 @@ export function ProfileForm() {
       preferences: { ...preferences, decimalComma: decimalMark === 'comma' },
     }),
     send: async (input) => {
-      setSaved(false);
+      onSaved(false);
       await apiSend('PATCH', '/users/me', null, { body: input });
       return input;
     },
     onDone: async (input) => {
       if (input.preferences?.theme) choose(input.preferences.theme);
       await refreshSession();
-      setSaved(true);
+      onSaved(true);
     },
   });
   return (

@@ -21,12 +21,13 @@ export function curvePoints(curve: Pick<CurveDto, 'segments'>): CurvePoint[] {
   const top = Math.max(rangeAt(FEWEST_CYCLES, high), high.above);
   const bottom = Math.max(rangeAt(MOST_CYCLES, low), low.above);
   const steps = 24;
-  const even = Array.from(
-    { length: steps + 1 },
-    (_, index) => 10 ** (Math.log10(top) + ((Math.log10(bottom) - Math.log10(top)) * index) / steps),
+  const between = Array.from(
+    { length: steps - 1 },
+    (_, index) => top * (bottom / top) ** ((index + 1) / steps),
   );
   const knees = curve.segments.map(({ above }) => above).filter((above) => above > bottom && above < top);
-  return [...new Set([...even, ...knees])]
+  // The ends stand as they are: one rounded below a cut-off would have no life and be lost.
+  return [...new Set([top, ...between, bottom, ...knees])]
     .sort((a, b) => b - a)
     .map((range) => ({ range, cycles: cyclesToFailure(curve, range) }))
     .filter(({ cycles }) => Number.isFinite(cycles));

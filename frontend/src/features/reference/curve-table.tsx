@@ -60,21 +60,23 @@ export function CurveTable({ curves }: { curves: CurveDto[] }) {
             : `${found.length} of ${curves.length} curves`}
         </span>
       </div>
-      <Table<CurveDto>
-        rowKey="id"
-        size="small"
-        columns={columns}
-        dataSource={found}
-        scroll={{ x: 'max-content' }}
-        pagination={{ pageSize: 25, hideOnSinglePage: true, showSizeChanger: false }}
-        locale={{
-          emptyText: (
-            <EmptyState title="No curve matches">
-              <p>Use fewer words.</p>
-            </EmptyState>
-          ),
-        }}
-      />
+      {/* Scrolled by a box of ours: antd's own scrolling measures with a style element that the page's policy refuses. */}
+      <div className={styles.scroll} tabIndex={0} role="group" aria-label="Curves">
+        <Table<CurveDto>
+          rowKey="id"
+          size="small"
+          columns={columns}
+          dataSource={found}
+          pagination={{ pageSize: 25, hideOnSinglePage: true, showSizeChanger: false }}
+          locale={{
+            emptyText: (
+              <EmptyState title="No curve matches">
+                <p>Use fewer words.</p>
+              </EmptyState>
+            ),
+          }}
+        />
+      </div>
     </>
   );
 }

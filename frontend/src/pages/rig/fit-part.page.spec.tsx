@@ -8,6 +8,9 @@ import { chooseOption } from '../../testing/choose-option';
 import { fakeApi, refusal, reply } from '../../testing/fake-api';
 import { renderApp } from '../../testing/render-app';
 import { sampleId, samplePosition, sampleSession } from '../../testing/samples';
+// Loaded here, so that the time antd takes to load is not taken for time the page takes.
+import '../../app/antd-scope';
+import './fit-part.page';
 
 const PATH = `/vessels/${sampleId(10)}/positions/${sampleId(20)}/fit`;
 

@@ -7,6 +7,9 @@ import { fakeApi, refusal, reply, type FakeReply } from '../../testing/fake-api'
 import { chooseOption } from '../../testing/choose-option';
 import { renderApp } from '../../testing/render-app';
 import { sampleId, sampleSession, sampleVessel } from '../../testing/samples';
+// Loaded here, so that the time antd takes to load is not taken for time the page takes.
+import '../../app/antd-scope';
+import './register-vessel.page';
 
 function register(answers: FakeReply[], session: SessionDto = sampleSession('rigger')) {
   return fakeApi(
