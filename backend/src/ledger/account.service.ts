@@ -1,6 +1,10 @@
 import type { EntityManager, RequiredEntityData } from '@mikro-orm/postgresql';
 import { Injectable } from '@nestjs/common';
-import { accountOf, totalDamage } from '@stayledger/shared/fatigue/account/account-of';
+import {
+  betweenLogsDamage,
+  recordedDamage,
+  totalDamage,
+} from '@stayledger/shared/fatigue/account/account-of';
 import { ENGINE_VERSION } from '@stayledger/shared/fatigue/engine-version';
 import { Clock } from '../common/clock/clock.js';
 import { newId } from '../common/ids/new-id.js';
@@ -12,11 +16,14 @@ import { type EntryContent, entryHash, FIRST_HASH } from './entry-hash.js';
 import { type EntryKind, LedgerEntry } from './ledger-entry.entity.js';
 import { type LogOfPart, PartHistory } from './part-history.js';
 
-/** An amount the account should hold. */
+/**
+ * An amount the account should hold. What it is made from is known at once; the damage is worked out only where an
+ * entry has to be written, so that posting the hundredth log of a life costs no more than posting the second.
+ */
 interface Amount {
   kind: Extract<EntryKind, 'recorded' | 'between-logs'>;
   loadLogId: string | null;
-  damage: number;
+  damage: () => number;
   basis: { [key: string]: CanonicalValue };
 }
 
@@ -94,7 +101,9 @@ export class AccountService {
     for (const amount of wanted.values()) {
       if (assessed === null) throw new Error(`Detail ${detail.id} has amounts and no curve`);
       chain.add({
-        ...amount,
+        kind: amount.kind,
+        loadLogId: amount.loadLogId,
+        damage: amount.damage(),
         basis: { ...amount.basis, edition: 1 + earlier.filter((entry) => sameKey(entry, amount)).length },
         reversesId: null,
         curve: [assessed.curve.id, assessed.curve.version],
@@ -114,18 +123,14 @@ export function standingAmong(entries: readonly LedgerEntry[]): LedgerEntry[] {
   return entries.filter((entry) => entry.kind !== 'reversal' && !reversed.has(entry.id));
 }
 
-/** What posting the given logs makes of one detail. */
-export function amountsOf(
-  logs: readonly LogOfPart[],
-  { detail, model, modelSha256 }: AssessedDetail,
-): Amount[] {
+/** The amounts of one detail after the given logs. */
+function amountsOf(logs: readonly LogOfPart[], { detail, model, modelSha256 }: AssessedDetail): Amount[] {
   if (logs.length === 0) return [];
-  const account = accountOf(logs, model);
   const described = { detailVersion: detail.version, modelSha256 };
   const recorded = logs.map((log): Amount => ({
     kind: 'recorded',
     loadLogId: log.loadLogId,
-    damage: account.recorded.get(log.loadLogId) ?? 0,
+    damage: () => recordedDamage(log, model).damage,
     basis: { ...described, spectrumSha256: log.spectrumSha256, stepKn: log.stepKn },
   }));
   const spectra = logs.map((log) => log.spectrumSha256);
@@ -134,7 +139,7 @@ export function amountsOf(
     {
       kind: 'between-logs',
       loadLogId: null,
-      damage: account.betweenLogs,
+      damage: () => betweenLogsDamage(logs, model).damage,
       basis: { ...described, residuesOf: spectra },
     },
   ];

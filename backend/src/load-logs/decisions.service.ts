@@ -34,10 +34,9 @@ export class DecisionsService {
   async post(me: Principal, loadLogId: string, input: PostLoadLogInput): Promise<LoadLogDto> {
     const log = await this.logs.lockOrFail(me, loadLogId, 'load-logs:post', input.version);
     await this.lockParts(log.mapping.channels.map(({ positionId }) => positionId));
-    const obstacle = await this.plan.obstacle(log);
+    const { parts: receivers, obstacle } = await this.plan.receivers(log);
     if (obstacle !== null) throw new StateConflictError(obstacle, await this.replies.one(log));
     const now = this.clock.now();
-    const receivers = await this.plan.receivers(log);
     this.em.assign(log, { state: 'posted', decidedBy: me.userId, decidedAt: now, updatedAt: now });
     await this.em.flush();
     for (const part of receivers) {

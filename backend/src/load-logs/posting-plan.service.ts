@@ -1,9 +1,8 @@
 import { EntityManager } from '@mikro-orm/postgresql';
 import { Injectable } from '@nestjs/common';
 import type { LogReviewDto } from '@stayledger/shared/contracts/load-logs';
-import { totalDamage } from '@stayledger/shared/fatigue/account/account-of';
+import { accountOf, betweenLogsDamage, totalDamage } from '@stayledger/shared/fatigue/account/account-of';
 import { dayIn } from '../common/clock/clock.js';
-import { amountsOf } from '../ledger/account.service.js';
 import { holds, type LogOfPart, PartHistory } from '../ledger/part-history.js';
 import { type AssessedDetail, assessedDetailsOf } from '../life/detail-models.js';
 import { PartDetail } from '../life/part-detail.entity.js';
@@ -33,22 +32,25 @@ export class PostingPlanService {
     private readonly history: PartHistory,
   ) {}
 
-  /** Per part and detail: allowance used before this log and after it. */
-  async effectOf(log: LoadLog): Promise<ReviewedPart[]> {
-    const reviewed: ReviewedPart[] = [];
-    for (const concerned of await this.concernedParts(log)) {
-      reviewed.push(await this.effectOn(concerned, log));
-    }
-    return reviewed;
+  /** Per part and detail allowance used before this log and after it, and why it cannot be posted, if it cannot. */
+  async review(log: LoadLog): Promise<{ parts: ReviewedPart[]; obstacle: string | null }> {
+    const concerned = await this.concernedParts(log);
+    const parts: ReviewedPart[] = [];
+    for (const one of concerned) parts.push(await this.effectOn(one, log));
+    return { parts, obstacle: await this.obstacleAmong(concerned, log) };
   }
 
-  /** Parts that receive the log when it is posted. */
-  async receivers(log: LoadLog): Promise<FittedPart[]> {
-    return (await this.concernedParts(log)).flatMap(({ part, logs }) => (logs ? [part] : []));
+  /** Parts that receive the log when it is posted, or why it cannot be posted. */
+  async receivers(log: LoadLog): Promise<{ parts: FittedPart[]; obstacle: string | null }> {
+    const concerned = await this.concernedParts(log);
+    return {
+      parts: concerned.flatMap(({ part, logs }) => (logs ? [part] : [])),
+      obstacle: await this.obstacleAmong(concerned, log),
+    };
   }
 
-  /** Why this log cannot be posted, in one or two sentences; null when it can. */
-  async obstacle(log: LoadLog): Promise<string | null> {
+  /** In one or two sentences; null when there is none. */
+  private async obstacleAmong(concerned: readonly ConcernedPart[], log: LoadLog): Promise<string | null> {
     const undecided = stateObstacle(log);
     if (undecided !== null) return undecided;
     const twin = await this.em.findOne(LoadLog, {
@@ -60,7 +62,6 @@ export class PostingPlanService {
     if (twin) {
       return `The same file was posted before, as ${twin.fileName}. Set this one aside.`;
     }
-    const concerned = await this.concernedParts(log);
     if (concerned.every(({ logs }) => logs === null)) {
       return (
         concerned.find(({ note }) => note !== null)?.note ??
@@ -146,20 +147,17 @@ function effectOnDetail(
   loadLogId: string,
 ): ReviewedDetail {
   const { id, name, designFatigueFactor: dff } = assessed.detail;
-  const without = amountsOf(
-    logs.filter((log) => log.loadLogId !== loadLogId),
-    assessed,
-  );
-  const withIt = amountsOf(logs, assessed);
-  const between = (amounts: typeof withIt) =>
-    amounts.find(({ kind }) => kind === 'between-logs')?.damage ?? 0;
+  const after = accountOf(logs, assessed.model);
+  const others = logs.filter((log) => log.loadLogId !== loadLogId);
+  const between = others.length === 0 ? 0 : betweenLogsDamage(others, assessed.model).damage;
+  const recordedByOthers = others.map((log) => after.recorded.get(log.loadLogId) ?? 0);
   return {
     detailId: id,
     name,
-    before: dff * totalDamage(without.map(({ damage }) => damage)),
-    after: dff * totalDamage(withIt.map(({ damage }) => damage)),
-    recorded: dff * (withIt.find((amount) => amount.loadLogId === loadLogId)?.damage ?? 0),
-    betweenLogs: dff * (between(withIt) - between(without)),
+    before: dff * totalDamage([...recordedByOthers, between]),
+    after: dff * after.total,
+    recorded: dff * (after.recorded.get(loadLogId) ?? 0),
+    betweenLogs: dff * (after.betweenLogs - between),
   };
 }
 

@@ -25,11 +25,12 @@ export class ReviewService {
 
   async review(me: Principal, loadLogId: string): Promise<LogReviewDto> {
     const log = await this.logs.findOrFail(me, loadLogId, 'load-logs:read');
+    const { parts, obstacle } = await this.plan.review(log);
     return {
       log: await this.replies.one(log),
       traces: await this.traces(log),
-      parts: await this.plan.effectOf(log),
-      postDisabledReason: await this.plan.obstacle(log),
+      parts,
+      postDisabledReason: obstacle,
     };
   }
 

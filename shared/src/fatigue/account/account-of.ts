@@ -25,13 +25,22 @@ export interface DetailAccount {
 export function accountOf(logs: readonly LogOfAccount[], model: DetailModel): DetailAccount {
   const recorded = new Map<string, number>();
   for (const log of logs) recorded.set(log.loadLogId, recordedDamage(log, model).damage);
-  const betweenLogs = logs.length === 0 ? 0 : damageOfSpectrum(cyclesBetweenLogs(logs), model).damage;
+  const betweenLogs = logs.length === 0 ? 0 : betweenLogsDamage(logs, model).damage;
   return { recorded, betweenLogs, total: totalDamage([...recorded.values(), betweenLogs]) };
 }
 
 /** What the cycles closed within one log do to a detail. */
 export function recordedDamage(log: LogOfAccount, model: DetailModel): SpectrumDamage {
   return damageOfSpectrum(closedCycles(log.spectrum), model);
+}
+
+/**
+ * What the cycles do to a detail that close between logs, or stay open at the end.
+ *
+ * @throws RangeError without a log
+ */
+export function betweenLogsDamage(logs: readonly LogOfAccount[], model: DetailModel): SpectrumDamage {
+  return damageOfSpectrum(cyclesBetweenLogs(logs), model);
 }
 
 /**
