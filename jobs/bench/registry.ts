@@ -21,4 +21,12 @@ export const REGISTRY: { values: string[]; load: () => Promise<BenchRow> }[] = [
     load: async () => (await import('./growth.row.js')).growthRow,
   },
   { values: ['lifeMergeMs', 'newCurveMs'], load: async () => (await import('./season.row.js')).seasonRow },
+  {
+    values: ['planVesselMs', 'planVesselGap'],
+    load: async () => (await import('./rerig-schedule.row.js')).planVesselRow,
+  },
+  {
+    values: ['planFirmS', 'planFirmGap'],
+    load: async () => (await import('./rerig-schedule.row.js')).planFirmRow,
+  },
 ];
