@@ -9,12 +9,20 @@ export const signInSchema = z.strictObject({
 export type SignInInput = z.infer<typeof signInSchema>;
 
 export const FORCE_UNITS = ['kN', 'kgf', 'daN', 'lbf', 'tf'] as const;
+const preferenceFields = {
+  forceUnit: z.enum(FORCE_UNITS),
+  lengthUnit: z.enum(['m', 'ft']),
+  theme: z.enum(['system', 'light', 'dark']),
+  decimalComma: z.boolean(),
+};
 export const preferencesSchema = z.object({
-  forceUnit: z.enum(FORCE_UNITS).default('kN'),
-  lengthUnit: z.enum(['m', 'ft']).default('m'),
-  theme: z.enum(['system', 'light', 'dark']).default('system'),
-  decimalComma: z.boolean().default(false),
+  forceUnit: preferenceFields.forceUnit.default('kN'),
+  lengthUnit: preferenceFields.lengthUnit.default('m'),
+  theme: preferenceFields.theme.default('system'),
+  decimalComma: preferenceFields.decimalComma.default(false),
 });
+/** Some of the preferences. Made from fields without defaults: a default would fill in, and so reset, what is left out. */
+export const preferencesChangeSchema = z.strictObject(preferenceFields).partial();
 export type Preferences = z.infer<typeof preferencesSchema>;
 
 /** Who is signed in, in which capacities, and what that allows. Permissions are the union over the roles. */

@@ -1,6 +1,6 @@
 import { z } from 'zod';
 import { ROLES } from '../permissions/permissions.js';
-import { preferencesSchema } from './auth.js';
+import { preferencesChangeSchema } from './auth.js';
 import { pageOf } from './pagination.js';
 import { idSchema, instantSchema, versionSchema } from './values.js';
 
@@ -18,7 +18,7 @@ export const userPageSchema = pageOf(userSchema);
 export const updateProfileSchema = z.strictObject({
   version: versionSchema,
   name: z.string().trim().min(1).max(120).optional(),
-  preferences: preferencesSchema.partial().optional(),
+  preferences: preferencesChangeSchema.optional(),
 });
 export type UpdateProfileInput = z.infer<typeof updateProfileSchema>;
 
