@@ -20,7 +20,7 @@ async function emptyPosition(kind = 'cap-shroud'): Promise<string> {
   return (await app.make.position(vessel, { kind })).id;
 }
 
-async function fit(body: object = WIRE, positionId?: string) {
+async function fitPart(body: object = WIRE, positionId?: string) {
   const reply = await agent.post(`/api/positions/${positionId ?? (await emptyPosition())}/parts`).send(body);
   return {
     status: reply.status,
@@ -43,7 +43,7 @@ async function tableSize(constructionId: string, diameterMm: number): Promise<Si
 
 describe('fitting a part', () => {
   it('takes the lower grade of the table without a certificate, and says so', async () => {
-    const { status, part } = await fit();
+    const { status, part } = await fitPart();
     expect(status).toBe(201);
     const size = await tableSize('strand-1x19-316', 8);
     const lowest = Math.min(...size.breakingLoads.map(({ breakingLoadKn }) => breakingLoadKn));
@@ -61,7 +61,7 @@ describe('fitting a part', () => {
   });
 
   it('lays out the details with curve, factor and words', async () => {
-    const { part } = await fit({
+    const { part } = await fitPart({
       ...WIRE,
       upperTerminal: 'swaged',
       lowerTerminal: 'swaged',
@@ -80,7 +80,7 @@ describe('fitting a part', () => {
   });
 
   it('knows how strong the assembly is, and which element nobody knows', async () => {
-    const { part } = await fit({ ...WIRE, upperTerminal: 'swaged', lowerTerminal: 'poured-socket' });
+    const { part } = await fitPart({ ...WIRE, upperTerminal: 'swaged', lowerTerminal: 'poured-socket' });
     // Reference data: a swage holds 0.9 of the wire, a poured socket all of it.
     expect(part.assembly.breakingLoadKn).toBeCloseTo(0.9 * part.breakingLoadKn, 9);
     expect(part.assembly.weakestElement).toBe('upper terminal');
@@ -88,7 +88,7 @@ describe('fitting a part', () => {
   });
 
   it('believes a certificate over the table', async () => {
-    const { part } = await fit({
+    const { part } = await fitPart({
       ...WIRE,
       breakingLoadKn: 61.5,
       breakingLoadFromCertificate: true,
@@ -99,30 +99,30 @@ describe('fitting a part', () => {
       breakingLoadSource: 'certificate',
       certificate: 'C 12',
     });
-    const { status, errors } = await fit({ ...WIRE, breakingLoadKn: 61.5 });
+    const { status, errors } = await fitPart({ ...WIRE, breakingLoadKn: 61.5 });
     expect([status, Object.keys(errors)]).toEqual([400, ['breakingLoadKn']]);
   });
 
   it('takes a diameter the table lacks only with a certificate', async () => {
     const odd = { ...WIRE, diameterMm: 8.7 };
-    expect((await fit(odd)).errors).toHaveProperty('breakingLoadKn');
-    const { status, part } = await fit({ ...odd, breakingLoadKn: 70, breakingLoadFromCertificate: true });
+    expect((await fitPart(odd)).errors).toHaveProperty('breakingLoadKn');
+    const { status, part } = await fitPart({ ...odd, breakingLoadKn: 70, breakingLoadFromCertificate: true });
     expect(status).toBe(201);
     // Fill factor of 1x19 strand 0.76 (EN 1993-1-11 Table 2.2, secondary): 0.76 * pi / 4 * 8.7^2 = 45.18 mm2.
     expect(part.metallicAreaMm2).toBeCloseTo(45.18, 1);
   });
 
   it('refuses what cannot be', async () => {
-    expect((await fit({ ...WIRE, constructionId: 'spaghetti' })).errors).toHaveProperty('constructionId');
-    expect((await fit({ ...WIRE, upperTerminal: 'cold-head' })).errors).toHaveProperty('upperTerminal');
-    expect((await fit({ ...WIRE, fittedOn: '2027-07-02' })).errors).toHaveProperty('fittedOn');
-    expect((await fit({ ...WIRE, fittedOn: '2027-02-30' })).errors).toHaveProperty('fittedOn');
-    expect((await fit({ ...WIRE, diameterMm: -8 })).errors).toHaveProperty('diameterMm');
+    expect((await fitPart({ ...WIRE, constructionId: 'spaghetti' })).errors).toHaveProperty('constructionId');
+    expect((await fitPart({ ...WIRE, upperTerminal: 'cold-head' })).errors).toHaveProperty('upperTerminal');
+    expect((await fitPart({ ...WIRE, fittedOn: '2027-07-02' })).errors).toHaveProperty('fittedOn');
+    expect((await fitPart({ ...WIRE, fittedOn: '2027-02-30' })).errors).toHaveProperty('fittedOn');
+    expect((await fitPart({ ...WIRE, diameterMm: -8 })).errors).toHaveProperty('diameterMm');
   });
 
   it('has room for one part in a place, also for two people at once', async () => {
     const positionId = await emptyPosition();
-    const replies = await Promise.all([fit(WIRE, positionId), fit(WIRE, positionId)]);
+    const replies = await Promise.all([fitPart(WIRE, positionId), fitPart(WIRE, positionId)]);
     expect(replies.map(({ status }) => status).sort()).toEqual([201, 409]);
     const { rows } = await app.database.admin.query(
       'select count(*)::int as n from fitted_part where position_id = $1',
@@ -132,7 +132,7 @@ describe('fitting a part', () => {
   });
 
   it('gives a date by the calendar from the day of fitting', async () => {
-    const { part } = await fit({ ...WIRE, fittedOn: '2020-05-01' });
+    const { part } = await fitPart({ ...WIRE, fittedOn: '2020-05-01' });
     // Stainless wire, private use: ten years (reference data, common practice).
     expect(part.standing).toMatchObject({
       assessment: 'not-assessed',
@@ -146,7 +146,7 @@ describe('fitting a part', () => {
 
 describe('changing a part', () => {
   it('lets the table speak again when the size changes', async () => {
-    const { part } = await fit();
+    const { part } = await fitPart();
     const { body } = await agent
       .patch(`/api/parts/${part.id}`)
       .send({ version: 1, diameterMm: 10 })
@@ -163,7 +163,7 @@ describe('changing a part', () => {
   });
 
   it('keeps a certificate through other changes', async () => {
-    const { part } = await fit({ ...WIRE, breakingLoadKn: 61.5, breakingLoadFromCertificate: true });
+    const { part } = await fitPart({ ...WIRE, breakingLoadKn: 61.5, breakingLoadFromCertificate: true });
     const { body } = await agent
       .patch(`/api/parts/${part.id}`)
       .send({ version: 1, notes: 'Looked at' })
@@ -181,7 +181,7 @@ describe('changing a part', () => {
   });
 
   it('answers 409 with the stored state', async () => {
-    const { part } = await fit();
+    const { part } = await fitPart();
     await agent.patch(`/api/parts/${part.id}`).send({ version: 1, notes: 'First' }).expect(200);
     const { body } = await agent
       .patch(`/api/parts/${part.id}`)
@@ -191,7 +191,7 @@ describe('changing a part', () => {
   });
 
   it('changes nothing when a later step fails', async () => {
-    const { part } = await fit();
+    const { part } = await fitPart();
     await agent
       .patch(`/api/parts/${part.id}`)
       .send({ version: 1, notes: 'Kept', diameterMm: 8.7 })
@@ -204,7 +204,7 @@ describe('changing a part', () => {
 describe('removing a part', () => {
   it('frees the place for the next one, whose account starts anew', async () => {
     const positionId = await emptyPosition();
-    const { part } = await fit({ ...WIRE, fittedOn: '2020-05-01' }, positionId);
+    const { part } = await fitPart({ ...WIRE, fittedOn: '2020-05-01' }, positionId);
     const remove = (removedOn: string) =>
       agent
         .post(`/api/parts/${part.id}/remove`)
@@ -218,8 +218,10 @@ describe('removing a part', () => {
       version: 2,
     });
 
-    expect((await fit({ ...WIRE, fittedOn: '2027-05-01' }, positionId)).errors).toHaveProperty('fittedOn');
-    const next = await fit({ ...WIRE, fittedOn: '2027-06-01' }, positionId);
+    expect((await fitPart({ ...WIRE, fittedOn: '2027-05-01' }, positionId)).errors).toHaveProperty(
+      'fittedOn',
+    );
+    const next = await fitPart({ ...WIRE, fittedOn: '2027-06-01' }, positionId);
     expect(next.status).toBe(201);
     expect(next.part.id).not.toBe(part.id);
     await agent.patch(`/api/parts/${part.id}`).send({ version: 2, notes: 'Too late' }).expect(409);
@@ -230,7 +232,7 @@ describe('removing a part', () => {
   });
 
   it('is noted, like every deed', async () => {
-    const { part } = await fit();
+    const { part } = await fitPart();
     await agent.patch(`/api/parts/${part.id}`).send({ version: 1, notes: 'x' }).expect(200);
     await agent
       .post(`/api/parts/${part.id}/remove`)
