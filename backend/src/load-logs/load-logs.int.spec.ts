@@ -8,6 +8,9 @@ import type { TestUser, TestVessel } from '../testing/factories.js';
 import { LOG_STORAGE, type LogStorage } from '../storage/log-storage.js';
 import { LogReceiver } from './log-receiver.js';
 
+// Each test waits for real threads and a real database, on whatever else the machine is doing.
+jest.setTimeout(60_000);
+
 let app: TestApp;
 let vessel: TestVessel;
 let rigger: TestUser;
@@ -22,7 +25,7 @@ beforeAll(async () => {
   rigger = await app.make.userOn(vessel, 'rigger', { firmId: vessel.firmId });
   agent = await app.signIn(rigger);
   positionId = (await app.make.position(vessel)).id;
-}, 60_000);
+});
 afterAll(() => app?.close());
 
 const BYTES = Buffer.from('time,load\n2026-06-01T00:00:00Z,1\n2026-06-01T00:00:01Z,2\n');

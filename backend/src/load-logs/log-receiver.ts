@@ -81,6 +81,36 @@ export class LogReceiver {
     });
   }
 
+  /**
+   * Gives an unfinished upload up at a person's wish. Once the last byte has arrived there is nothing to cancel: the log
+   * is then set aside, and its file stays.
+   */
+  async cancel(key: StorageKey, userId: string): Promise<void> {
+    const cancelled = await withAccess(this.em, key, async (em) => {
+      const log = await em.findOne(LoadLog, key.loadLogId, { lockMode: LockMode.PESSIMISTIC_WRITE });
+      if (log?.state !== 'receiving') return false;
+      em.assign(log, {
+        state: 'failed',
+        failure: {
+          code: 'upload-cancelled',
+          message: 'The upload was cancelled and what had arrived was thrown away. Add the log anew.',
+        },
+        updatedAt: this.clock.now(),
+      });
+      await em.flush();
+      await this.audit.record(em, {
+        userId,
+        vesselId: log.vessel,
+        action: 'load-log.upload-cancelled',
+        subjectKind: 'load-log',
+        subjectId: log.id,
+        data: {},
+      });
+      return true;
+    });
+    if (cancelled) await this.storage.discard(key);
+  }
+
   @Interval(SWEEP_EVERY_MS)
   sweep(): Promise<void> {
     this.sweeping ??= this.sweepOnce()

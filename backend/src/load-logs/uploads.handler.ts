@@ -8,7 +8,13 @@ import { idSchema } from '@stayledger/shared/contracts/values';
 import { DataStore, Server, Upload } from '@tus/server';
 import type { RequestHandler, Response } from 'express';
 import { type Principal, principalOf, reachOf } from '../auth/principal.js';
-import { AppError, ForbiddenError, InvalidRequestError, NotFoundError } from '../common/errors/app-error.js';
+import {
+  AppError,
+  ForbiddenError,
+  InvalidRequestError,
+  NotFoundError,
+  StateConflictError,
+} from '../common/errors/app-error.js';
 import { currentRequestId } from '../common/http/request-context.js';
 import { inReach } from '../database/reach.js';
 import { LOG_STORAGE, type LogStorage, type StorageKey } from '../storage/log-storage.js';
@@ -47,7 +53,11 @@ export class UploadsHandler {
       relativeLocation: true,
       allowedOrigins: [],
       maxSize: LOAD_LOG_SIZE_MAX_BYTES,
-      datastore: new LoadLogStore(storage, () => this.announcedLog()),
+      datastore: new LoadLogStore(
+        storage,
+        () => this.announcedLog(),
+        () => this.cancel(),
+      ),
       namingFunction: (_request, metadata) => announcedId(metadata?.loadLogId),
       onIncomingRequest: (_request, id) => this.admit(id),
       onUploadCreate: async (_request, upload) => {
@@ -82,6 +92,16 @@ export class UploadsHandler {
     if (scope.log.state === 'receiving' && received?.bytes === scope.log.sizeBytes) {
       await this.receiver.takeOver(keyOf(scope.log));
     }
+  }
+
+  private async cancel(): Promise<void> {
+    const log = this.announcedLog();
+    if (log.state !== 'receiving') {
+      throw new StateConflictError(
+        'This file has arrived in full. Set the log aside instead of cancelling it.',
+      );
+    }
+    await this.receiver.cancel(keyOf(log), this.scope().me.userId);
   }
 
   private async begin(upload: Upload): Promise<void> {
@@ -123,11 +143,12 @@ export class UploadsHandler {
 
 /** The announced logs as tus sees them; what has arrived is asked of the files every time. */
 class LoadLogStore extends DataStore {
-  override extensions = ['creation', 'expiration'];
+  override extensions = ['creation', 'expiration', 'termination'];
 
   constructor(
     private readonly storage: LogStorage,
     private readonly announced: () => LoadLog,
+    private readonly cancel: () => Promise<void>,
   ) {
     super();
   }
@@ -156,6 +177,10 @@ class LoadLogStore extends DataStore {
     const received = await this.storage.received(key);
     if (received?.complete) return received.bytes;
     return this.storage.append(key, offset, source);
+  }
+
+  override remove(): Promise<void> {
+    return this.cancel();
   }
 
   override getExpiration(): number {

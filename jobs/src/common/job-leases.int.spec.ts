@@ -4,6 +4,7 @@ import { Clock } from '@stayledger/backend/persistence';
 import { LOG_STORAGE, type LogStorage } from '@stayledger/backend/storage/log-storage';
 import type { TestApp } from '@stayledger/backend/testing/test-app';
 import { countLoadLog } from '../load-logs/count-load-log.js';
+import { CountingRunner } from '../load-logs/counting-runner.js';
 import { CountingPool } from '../load-logs/counting-pool.js';
 import {
   createLoggedVessel,
@@ -24,13 +25,16 @@ import {
 } from './job-leases.js';
 import { JobSweep } from './job-sweep.js';
 
+// Each test waits for real threads and a real database, on whatever else the machine is doing.
+jest.setTimeout(60_000);
+
 let app: TestApp;
 let logged: LoggedVessel;
 
 beforeAll(async () => {
   app = await createTestService();
   logged = await createLoggedVessel(app);
-}, 60_000);
+});
 afterAll(() => app?.close());
 
 const never = new AbortController().signal;
@@ -161,6 +165,37 @@ describe('leases', () => {
     if (again) await countLoadLog(deps(), again, never);
     await settled(logged.agent, log.id);
     expect((await result()).rows).toEqual(once);
+  });
+});
+
+describe('a worker that is told to stop', () => {
+  it('gives its job back at once, and the try does not count', async () => {
+    const { jobId, loadLogId } = await abandonedJob('2026-06-09T06:00:00Z');
+    await expireLease(jobId);
+    let begun: () => void = () => undefined;
+    const counting = new Promise<void>((resolve) => {
+      begun = resolve;
+    });
+    const endless: Pick<CountingPool, 'count'> = {
+      count: (_path, _config, { signal }) =>
+        new Promise((_resolve, reject) => {
+          begun();
+          signal.addEventListener('abort', () => reject(new Error('thread ended')));
+        }),
+    };
+    const { em: manager, clock, storage } = deps();
+    const runner = new CountingRunner(manager, endless, clock, storage);
+    const run = runner.run(jobId);
+    await counting;
+    await runner.beforeApplicationShutdown();
+    await run;
+    const { rows } = await app.database.admin.query(
+      'select state, attempts, last_error from job where id = $1',
+      [jobId],
+    );
+    expect(rows[0]).toEqual({ state: 'queued', attempts: 1, last_error: null });
+    await app.nest.get(JobSweep).sweep();
+    expect((await settled(logged.agent, loadLogId)).state).toBe('counted');
   });
 });
 

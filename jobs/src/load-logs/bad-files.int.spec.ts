@@ -10,13 +10,16 @@ import {
   uploadLog,
 } from '../testing/log-journey.js';
 
+// Each test waits for real threads and a real database, on whatever else the machine is doing.
+jest.setTimeout(60_000);
+
 let app: TestApp;
 let logged: LoggedVessel;
 
 beforeAll(async () => {
   app = await createTestService();
   logged = await createLoggedVessel(app);
-}, 60_000);
+});
 afterAll(() => app?.close());
 
 const good = swingingCsv({ start: '2026-06-01T06:00:00Z', hours: 2, lowKn: 4, highKn: 14 });

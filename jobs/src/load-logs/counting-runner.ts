@@ -17,7 +17,7 @@ export class CountingRunner implements BeforeApplicationShutdown {
 
   constructor(
     private readonly em: EntityManager,
-    private readonly pool: CountingPool,
+    @Inject(CountingPool) private readonly pool: Pick<CountingPool, 'count'>,
     private readonly clock: Clock,
     @Inject(LOG_STORAGE) private readonly storage: LogStorage,
   ) {}

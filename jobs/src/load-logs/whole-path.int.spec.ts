@@ -17,11 +17,14 @@ import {
   uploadLog,
 } from '../testing/log-journey.js';
 
+// Each test waits for real threads and a real database, on whatever else the machine is doing.
+jest.setTimeout(60_000);
+
 let app: TestApp;
 
 beforeAll(async () => {
   app = await createTestService();
-}, 60_000);
+});
 afterAll(() => app?.close());
 
 function post(logged: LoggedVessel, log: { id: string; version: number }) {
