@@ -34,6 +34,11 @@ const withAntd = (children: RouteObject[]): RouteObject => ({
 /** Pages without antd: light enough for a phone on a poor line. */
 const lightPages: RouteObject[] = [
   lazyPage(
+    paths.reference.pattern,
+    () => import('../pages/reference/reference.page'),
+    (module) => module.ReferencePage,
+  ),
+  lazyPage(
     paths.administration.pattern,
     () => import('../pages/administration/administration.page'),
     (module) => module.AdministrationPage,
@@ -92,7 +97,7 @@ const lightPages: RouteObject[] = [
   ),
 ];
 
-/** Forms and long tables. */
+/** Pages with forms. */
 const antdPages: RouteObject[] = [
   lazyPage(
     paths.registerVessel.pattern,
@@ -133,11 +138,6 @@ const antdPages: RouteObject[] = [
     paths.removePart.pattern,
     () => import('../pages/rig/remove-part.page'),
     (module) => module.RemovePartPage,
-  ),
-  lazyPage(
-    paths.reference.pattern,
-    () => import('../pages/reference/reference.page'),
-    (module) => module.ReferencePage,
   ),
   lazyPage(
     paths.profile.pattern,

@@ -62,7 +62,7 @@ export function FleetFilters({
   }, [typed, asked]);
 
   return (
-    <search className={styles.filters}>
+    <div role="search" className={styles.filters}>
       <PlainInput
         label="Find a vessel"
         type="search"
@@ -92,6 +92,6 @@ export function FleetFilters({
           </option>
         ))}
       </PlainSelect>
-    </search>
+    </div>
   );
 }

@@ -7,9 +7,6 @@ import { describe, expect, it } from 'vitest';
 import { fakeApi, reply, type FakeRequest } from '../../testing/fake-api';
 import { renderApp } from '../../testing/render-app';
 import { sampleSession } from '../../testing/samples';
-// Loaded here, so that the time antd takes to load is not taken for time the page takes.
-import '../../app/antd-scope';
-import './reference.page';
 
 // The shipped data themselves: every word table of the pages must know every key that stands in them.
 const data = (name: string): unknown =>
@@ -43,6 +40,15 @@ describe('the reference data', () => {
         .map((link) => link.textContent),
     ).toEqual(['EN 1993-1-11, category 150']);
     expect(screen.getByText(`1 of ${curves.length} curves`)).toBeTruthy();
+  });
+
+  it('show a first part of the list and the rest on request', async () => {
+    reference();
+    const { user } = renderApp('/reference');
+    const rows = async () => within(await screen.findByRole('table', { name: 'Curves' })).getAllByRole('row');
+    expect(await rows()).toHaveLength(1 + 25);
+    await user.click(screen.getByRole('button', { name: `Show all ${curves.length}` }));
+    expect(await rows()).toHaveLength(1 + curves.length);
   });
 
   it('say when nothing matches', async () => {
