@@ -6,6 +6,7 @@ import { AppModule } from '@stayledger/backend/app.module';
 import { EnvironmentError, readEnv, type Env } from '@stayledger/backend/config/env';
 import { readDemo } from '@stayledger/backend/database/seed/read-demo';
 import { AnotherProcessError, becomeSoleProcess } from '@stayledger/backend/database/sole-process';
+import { takeBackLeases } from './common/job-leases.js';
 import { stopOnSignals } from './common/stop-on-signals.js';
 import { bringInDemoLogs } from './demo/bring-in-demo-logs.js';
 import { JobsModule } from './jobs.module.js';
@@ -21,6 +22,7 @@ async function main(): Promise<void> {
   const embedded = env.REDIS_URL === undefined;
   const sole = embedded ? await becomeSoleProcess(env.DATABASE_APP_URL, giveUp) : null;
   const app = await createApp(env, AllInOneModule);
+  if (embedded) await takeBackLeases(app.get(EntityManager).fork());
   const stopping = new AbortController();
   let demo: Promise<void> = Promise.resolve();
   stopOnSignals(async () => {

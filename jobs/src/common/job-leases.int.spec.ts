@@ -21,6 +21,7 @@ import {
   LeaseLostError,
   renewLease,
   returnJob,
+  takeBackLeases,
   waitingJobs,
 } from './job-leases.js';
 import { JobSweep } from './job-sweep.js';
@@ -165,6 +166,16 @@ describe('leases', () => {
     if (again) await countLoadLog(deps(), again, never);
     await settled(logged.agent, log.id);
     expect((await result()).rows).toEqual(once);
+  });
+});
+
+describe('a process that is the only one', () => {
+  it('goes on at once with what its predecessor held', async () => {
+    const { jobId, loadLogId } = await abandonedJob('2026-06-10T06:00:00Z');
+    expect(await waitingJobs(em())).not.toContain(jobId);
+    await takeBackLeases(em());
+    await app.nest.get(JobSweep).sweep();
+    expect((await settled(logged.agent, loadLogId)).state).toBe('counted');
   });
 });
 
