@@ -297,7 +297,7 @@ class ChannelCount {
   result(rows: number, envelopes: EnvelopeClock, index: number, hasTime: boolean): ChannelResult {
     const { counter } = this;
     const { samples } = counter;
-    return {
+    const result = {
       column: this.config.column,
       // Made when asked for: the spectra of all channels at once are what would take memory here.
       get spectrum() {
@@ -310,6 +310,10 @@ class ChannelCount {
       maxAtMs: samples > 0 && hasTime && !Number.isNaN(this.maxAtMs) ? this.maxAtMs : null,
       envelope: envelopes.envelope(index),
     };
+    // Not enumerable: whoever copies a result to another thread copies figures, not functions.
+    return Object.defineProperty(result, 'encodedSpectrum', {
+      value: () => counter.encoded(),
+    }) as typeof result & { encodedSpectrum: () => Uint8Array };
   }
 
   /** Goes on with the same count on a grid coarse enough to stay bounded. */

@@ -121,8 +121,10 @@ export interface Envelope {
 /** What was counted in one column. */
 export interface ChannelResult {
   column: string;
-  /** Levels in steps of `spectrum.step` kN. */
+  /** Levels in steps of `spectrum.step` kN; made each time it is asked for. */
   spectrum: LoadSpectrum;
+  /** The same as `encodeSpectrum` stores it, without taking the memory of the spectrum. Not copied between threads. */
+  encodedSpectrum(): Uint8Array;
   samples: number;
   /** Rows without a usable sample. */
   missing: number;

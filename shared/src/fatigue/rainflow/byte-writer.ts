@@ -6,6 +6,11 @@ export class ByteWriter {
   private view = new DataView(this.bytes.buffer);
   private at = 0;
 
+  /** Begins again, keeping the memory. */
+  clear(): void {
+    this.at = 0;
+  }
+
   /** One byte. */
   byte(value: number): void {
     this.room(1);
@@ -49,6 +54,13 @@ export class ByteWriter {
     if (rest > 0) this.whole(rest);
   }
 
+  /** Bytes written elsewhere. */
+  append(bytes: Uint8Array): void {
+    this.room(bytes.length);
+    this.bytes.set(bytes, this.at);
+    this.at += bytes.length;
+  }
+
   /** Ends with a check sum of all before. */
   checkSum(): void {
     this.room(4);
@@ -63,7 +75,7 @@ export class ByteWriter {
 
   private room(size: number): void {
     if (this.at + size <= this.bytes.length) return;
-    const bytes = new Uint8Array(this.bytes.length * 2);
+    const bytes = new Uint8Array(Math.max(this.bytes.length * 2, this.at + size));
     bytes.set(this.bytes);
     this.bytes = bytes;
     this.view = new DataView(bytes.buffer);

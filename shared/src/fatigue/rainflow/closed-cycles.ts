@@ -1,14 +1,20 @@
 import { ByteReader } from './byte-reader.js';
 import { ByteWriter } from './byte-writer.js';
 import { readCycles, writeCycles } from './cycle-codec.js';
+import { PackedCursor, TableCursor, writeMerged, type CycleCursor } from './cycle-cursor.js';
 import { CycleBins } from './cycle-bins.js';
 import type { CycleTable, DayCycles } from './load-spectrum.js';
 import { mergeCycleTables } from './merge-cycle-tables.js';
+import type { SpectrumParts } from './spectrum-codec.js';
 
 /** Packed tables of one day that are joined when they become this many. */
 const MOST_PACKED = 32;
+const MOST_SPARES = 2;
 const WHOLE = 1;
 const RAW = 0;
+
+/** Used for one day after the other. */
+const writer = new ByteWriter();
 
 /** Cycles of a day that is over, in a few bytes each. */
 interface PackedDay {
@@ -24,8 +30,10 @@ interface PackedDay {
 export class ClosedCycles {
   private readonly live = new Map<number, CycleBins>();
   private readonly packed = new Map<number, PackedDay>();
-  private spare: CycleBins | null = null;
+  /** Bins of days that are over, for the days to come, the roomiest last. */
+  private readonly spares: CycleBins[] = [];
   private binsDay = NaN;
+  private recordedDay = NaN;
   private bins: CycleBins;
 
   /** @param whole whether extremes are whole levels; false: raw loads */
@@ -52,11 +60,14 @@ export class ClosedCycles {
     for (const [day, bins] of this.live) {
       if (day === recordedDay) continue;
       this.live.delete(day);
-      this.pack(day, bins.table(), bins.isCompact);
+      this.pack(day, bins.view(), bins.isCompact);
       bins.clear();
-      this.spare = bins;
+      this.spares.push(bins);
     }
+    this.spares.sort((one, two) => one.room - two.room);
+    this.spares.splice(0, this.spares.length - MOST_SPARES);
     this.binsDay = NaN;
+    this.recordedDay = recordedDay;
   }
 
   /** All cycles so far, days ascending. */
@@ -72,11 +83,42 @@ export class ClosedCycles {
       });
   }
 
+  /**
+   * All cycles so far as days that write themselves, with late ones added; `null` when one of them is not on whole
+   * levels. What is packed stays packed: a season is never unpacked at once.
+   */
+  packedDays(late: ReadonlyMap<number, CycleTable>): SpectrumParts['days'] | null {
+    const days = new Set([...this.packed.keys(), ...this.live.keys(), ...late.keys()]);
+    for (const bins of this.live.values()) if (!bins.isCompact) return null;
+    for (const { parts } of this.packed.values()) if (parts.some((part) => part[0] !== WHOLE)) return null;
+    return [...days]
+      .sort((a, b) => a - b)
+      .map((day) => ({
+        day,
+        write: (out) => {
+          const parts = this.packed.get(day)?.parts ?? [];
+          const bins = this.live.get(day);
+          const added = late.get(day);
+          if (parts.length === 1 && bins === undefined && added === undefined) {
+            out.append(parts[0].subarray(1));
+            return;
+          }
+          writeMerged(out, () => {
+            const cursors: CycleCursor[] = parts.map((part) => new PackedCursor(readerOf(part, 1)));
+            if (bins !== undefined) cursors.push(new TableCursor(bins.view()));
+            if (added !== undefined) cursors.push(new TableCursor(added));
+            return cursors;
+          });
+        },
+      }));
+  }
+
   private use(day: number): void {
     let bins = this.live.get(day);
     if (bins === undefined) {
-      bins = this.spare ?? new CycleBins(this.whole);
-      this.spare = null;
+      // The day being recorded gets the roomiest; a cycle that closes late needs little.
+      bins =
+        (day === this.recordedDay ? this.spares.pop() : this.spares.shift()) ?? new CycleBins(this.whole);
       this.live.set(day, bins);
     }
     this.binsDay = day;
@@ -97,7 +139,7 @@ export class ClosedCycles {
       known.parts = [];
       known.size = 0;
     }
-    const writer = new ByteWriter();
+    writer.clear();
     writer.byte(whole ? WHOLE : RAW);
     writeCycles(writer, joined, whole);
     known.parts.push(writer.finish());
@@ -105,7 +147,10 @@ export class ClosedCycles {
   }
 
   private unpack(part: Uint8Array): CycleTable {
-    const reader = new ByteReader(new DataView(part.buffer, part.byteOffset, part.length), 0, part.length);
-    return readCycles(reader, reader.byte() === WHOLE);
+    return readCycles(readerOf(part, 1), part[0] === WHOLE);
   }
+}
+
+function readerOf(part: Uint8Array, from: number): ByteReader {
+  return new ByteReader(new DataView(part.buffer, part.byteOffset, part.length), from, part.length);
 }

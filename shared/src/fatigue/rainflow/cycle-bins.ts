@@ -39,6 +39,11 @@ export class CycleBins {
     return this.wide === null ? this.tiles * TILE_BINS : this.wide.size;
   }
 
+  /** How much it holds before it grows. */
+  get room(): number {
+    return this.slots;
+  }
+
   /** Whether all extremes so far are 32-bit whole numbers. */
   get isCompact(): boolean {
     return this.wide === null;
@@ -69,6 +74,15 @@ export class CycleBins {
 
   /** The cycles counted so far, sorted. */
   table(): CycleTable {
+    const { low, high, count } = this.view();
+    return { low: low.slice(), high: high.slice(), count: count.slice() };
+  }
+
+  /**
+   * The same without copying, in memory that is used again by the next call on any bins: a day's cycles are looked
+   * at once to be packed, and memory taken for that each time would pile up faster than it is collected.
+   */
+  view(): CycleTable {
     if (this.wide !== null) return this.wide.table();
     const { counts, tiles } = this;
     let size = 0;
@@ -76,9 +90,8 @@ export class CycleBins {
     if (size === 0) return emptyCycleTable();
     // One more than needed: every bin is written, and only a filled one is stepped past. A branch on whether a bin
     // is filled would be guessed wrong too often.
-    const low = new Float64Array(size + 1);
-    const high = new Float64Array(size + 1);
-    const count = new Float64Array(size + 1);
+    if (size + 1 > scratch.low.length) scratch = emptyTableOf(size * 2);
+    const { low, high, count } = scratch;
     const { keys, places } = this;
     const order = this.sortedSlots();
     let n = 0;
@@ -103,7 +116,7 @@ export class CycleBins {
       }
       from = to;
     }
-    return { low: low.slice(0, size), high: high.slice(0, size), count: count.slice(0, size) };
+    return { low: low.subarray(0, size), high: high.subarray(0, size), count: count.subarray(0, size) };
   }
 
   /** Forgets everything, keeping the memory for the next use. */
@@ -190,6 +203,12 @@ export class CycleBins {
     this.wide = wide;
     return wide;
   }
+}
+
+let scratch = emptyTableOf(1024);
+
+function emptyTableOf(size: number): CycleTable {
+  return { low: new Float64Array(size), high: new Float64Array(size), count: new Float64Array(size) };
 }
 
 /** 1 for a count above 0, without a branch: the sign of the negated halves. */

@@ -4,22 +4,40 @@ import type { CycleTable } from './load-spectrum.js';
 
 /** Writes a cycle table: whole levels as differences, raw loads as doubles. */
 export function writeCycles(out: ByteWriter, { low, high, count }: CycleTable, whole: boolean): void {
-  const size = count.length;
-  out.whole(size);
-  let previousLow = 0;
-  let previousHigh = 0;
-  for (let i = 0; i < size; i++) {
-    if (whole) {
-      if (i === 0) out.signed(low[i]);
-      else out.whole(low[i] - previousLow);
-      out.whole(i > 0 && low[i] === previousLow ? high[i] - previousHigh : high[i] - low[i]);
+  const writer = new CycleWriter(out, count.length, whole);
+  for (let i = 0; i < count.length; i++) writer.write(low[i], high[i], count[i]);
+}
+
+/** Writes cycles one after the other, in ascending order. */
+export class CycleWriter {
+  private begun = false;
+  private previousLow = 0;
+  private previousHigh = 0;
+
+  /** @param size how many cycles will be written */
+  constructor(
+    private readonly out: ByteWriter,
+    size: number,
+    private readonly whole: boolean,
+  ) {
+    out.whole(size);
+  }
+
+  /** Writes the next cycle. */
+  write(low: number, high: number, count: number): void {
+    const { out, begun, previousLow } = this;
+    if (this.whole) {
+      if (begun) out.whole(low - previousLow);
+      else out.signed(low);
+      out.whole(begun && low === previousLow ? high - this.previousHigh : high - low);
     } else {
-      out.double(low[i]);
-      out.double(high[i]);
+      out.double(low);
+      out.double(high);
     }
-    out.whole(count[i]);
-    previousLow = low[i];
-    previousHigh = high[i];
+    out.whole(count);
+    this.begun = true;
+    this.previousLow = low;
+    this.previousHigh = high;
   }
 }
 

@@ -168,6 +168,19 @@ describe('a load spectrum', () => {
     );
   });
 
+  it('is stored the same straight from the counter', () => {
+    fc.assert(
+      fc.property(history, fc.constantFrom(0, 0.5), fc.integer({ min: 1, max: 9 }), (loads, step, perDay) => {
+        const counter = new RainflowCounter({ step });
+        loads.forEach((load, i) => counter.push(Float64Array.of(load), 1, Math.floor(i / perDay)));
+        expect(counter.encoded()).toEqual(encodeSpectrum(counter.spectrum()));
+        const days = loads.map((_, i) => Math.floor(i / perDay));
+        expect(counter.encoded()).toEqual(encodeSpectrum(spectrumOf(loads, { step, day: days })));
+      }),
+      { numRuns: 500 },
+    );
+  });
+
   it('keeps the same ranges when the history is read backwards', () => {
     fc.assert(
       fc.property(history, (loads) => {

@@ -1,9 +1,9 @@
 import { commonStep } from './common-step.js';
-import { cycleTableOf } from './cycle-table.js';
 import { emptySpectrum, type CycleTable, type LoadSpectrum } from './load-spectrum.js';
 import { mergeCycleTables } from './merge-cycle-tables.js';
 import { onGrid } from './on-grid.js';
 import { reduceResidue } from './reduce-residue.js';
+import { tablesByDay } from './tables-by-day.js';
 
 /**
  * The spectrum of one stretch of history followed by another: closed cycles are added, and the four-point rule
@@ -31,7 +31,8 @@ export function mergeAll(spectra: readonly LoadSpectrum[]): LoadSpectrum {
   if (parts.length === 0) return emptySpectrum(spectra.length > 0 ? spectra[0].step : 0);
   if (parts.length === 1) return parts[0];
   let step = parts[0].step;
-  for (const part of parts) step = safeStep(parts, commonStep(step, part.step));
+  for (const part of parts) step = commonStep(step, part.step);
+  step = safeStep(parts, step);
   const aligned = parts.map((part) => onGrid(part, step));
 
   let points = 0;
@@ -52,19 +53,7 @@ export function mergeAll(spectra: readonly LoadSpectrum[]): LoadSpectrum {
   }
 
   const joined = reduceResidue(loads, days);
-  const newDays = new Map<number, number[]>();
-  joined.day.forEach((day, i) => {
-    const members = newDays.get(day);
-    if (members === undefined) newDays.set(day, [i]);
-    else members.push(i);
-  });
-  for (const [day, members] of newDays) {
-    const table = cycleTableOf(
-      members.map((i) => joined.low[i]),
-      members.map((i) => joined.high[i]),
-    );
-    addTable(tables, day, table);
-  }
+  for (const [day, cycles] of tablesByDay(joined)) addTable(tables, day, cycles);
   return {
     step,
     days: [...tables.keys()]
@@ -88,6 +77,7 @@ function addTable(tables: Map<number, CycleTable[]>, day: number, cycles: CycleT
 function safeStep(parts: readonly LoadSpectrum[], step: number): number {
   if (step === 0) return 0;
   for (const part of parts) {
+    if (part.step === step) continue;
     // The extremes of a history never pair, so the residue holds its largest and smallest load.
     for (const level of part.residue) {
       if (Math.abs(level) * (part.step / step) > Number.MAX_SAFE_INTEGER) return 0;

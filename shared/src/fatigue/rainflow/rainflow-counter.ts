@@ -1,7 +1,11 @@
 import { ClosedCycles } from './closed-cycles.js';
-import type { LoadSpectrum } from './load-spectrum.js';
 import { levelOf } from './level-of.js';
-import { mergeAll } from './merge-spectra.js';
+import type { CycleTable, LoadSpectrum } from './load-spectrum.js';
+import { mergeCycleTables } from './merge-cycle-tables.js';
+import { mergeSpectra } from './merge-spectra.js';
+import { reduceResidue } from './reduce-residue.js';
+import { encodeParts, encodeSpectrum } from './spectrum-codec.js';
+import { tablesByDay } from './tables-by-day.js';
 
 /** Samples handled at once; bounds the room needed on the stack. */
 const PART = 4096;
@@ -216,36 +220,56 @@ export class RainflowCounter {
   /** The load spectrum of everything so far. The counter can carry on afterwards. */
   spectrum(): LoadSpectrum {
     const own = this.own();
-    return this.before === null ? own : mergeAll([this.before, own]);
+    return this.before === null ? own : mergeSpectra(this.before, own);
+  }
+
+  /**
+   * The load spectrum of everything so far as bytes: the same as `encodeSpectrum(spectrum())`, without taking the
+   * memory of the whole spectrum.
+   */
+  encoded(): Uint8Array {
+    const { step, cycles } = this;
+    const { residue, residueDay, late } = this.ending();
+    const days = step > 0 && this.before === null ? cycles.packedDays(late) : null;
+    if (days === null || !residue.every(Number.isSafeInteger)) return encodeSpectrum(this.spectrum());
+    const { counted: samples, turns: turningPoints } = this;
+    return encodeParts({ step, days, residue, residueDay, samples, turningPoints }, true);
   }
 
   private own(): LoadSpectrum {
-    const size = this.top + (this.last === this.last ? 1 : 0);
-    const residue = this.stack.slice(0, size);
-    const residueDay = this.stackDay.slice(0, size);
-    if (size > this.top) {
-      residue[size - 1] = levelOf(this.last, this.step);
-      residueDay[size - 1] = this.lastDay;
+    const { residue, residueDay, late } = this.ending();
+    const days = new Map(this.cycles.days().map(({ day, cycles }) => [day, cycles]));
+    for (const [day, table] of late) {
+      const known = days.get(day);
+      days.set(day, known === undefined ? table : mergeCycleTables([known, table]));
     }
-    for (let i = 0; i < size; i++) residue[i] += 0;
-    const open: LoadSpectrum = {
+    return {
       step: this.step,
-      days: this.cycles.days(),
-      residue: new Float64Array(0),
-      residueDay: new Int32Array(0),
+      days: [...days].sort(([a], [b]) => a - b).map(([day, cycles]) => ({ day, cycles })),
+      residue,
+      residueDay,
       samples: this.counted,
       turningPoints: this.turns,
     };
-    // The running extreme is a turning point of the history so far and may close cycles as one.
-    const end: LoadSpectrum = {
-      step: this.step,
-      days: [],
-      residue,
-      residueDay,
-      samples: 0,
-      turningPoints: 0,
-    };
-    return size === 0 ? open : { ...mergeAll([open, end]), turningPoints: this.turns };
+  }
+
+  /**
+   * The residue with the running extreme as its last point, and the cycles that closes. The counter itself does
+   * not change: the extreme may still move on.
+   */
+  private ending(): { residue: Float64Array; residueDay: Int32Array; late: Map<number, CycleTable> } {
+    const size = this.top + (this.last === this.last ? 1 : 0);
+    const open = this.stack.slice(0, size);
+    const openDay = this.stackDay.slice(0, size);
+    if (size > this.top) {
+      open[size - 1] = levelOf(this.last, this.step);
+      openDay[size - 1] = this.lastDay;
+    }
+    // Adding zero turns -0 into 0: equal loads, equal bytes.
+    for (let i = 0; i < size; i++) open[i] += 0;
+    const reduced = reduceResidue(open, openDay);
+    const { residue, residueDay } = reduced;
+    return { residue, residueDay, late: tablesByDay(reduced) };
   }
 
   /** Room on the stack for one more turning point a sample. */

@@ -5,6 +5,9 @@ import { readCycles, writeCycles } from './cycle-codec.js';
 import type { DayCycles, LoadSpectrum } from './load-spectrum.js';
 import { SpectrumFormatError } from './spectrum-format-error.js';
 
+/** Used for one spectrum after the other: memory taken for each would pile up faster than it is collected. */
+const out = new ByteWriter();
+
 const VERSION = 1;
 const WHOLE_LEVELS = 1;
 const RAW_LOADS = 0;
@@ -22,14 +25,32 @@ const CHECK_BYTES = 4;
  * @throws RangeError when a count is no whole number
  */
 export function encodeSpectrum(spectrum: LoadSpectrum): Uint8Array {
-  const { step, days, residue, residueDay } = spectrum;
   const whole = hasWholeLevels(spectrum);
-  const out = new ByteWriter();
+  const days = spectrum.days.map(({ day, cycles }) => ({
+    day,
+    write: () => writeCycles(out, cycles, whole),
+  }));
+  return encodeParts({ ...spectrum, days }, whole);
+}
+
+/** A spectrum whose days write their cycles themselves. */
+export interface SpectrumParts extends Omit<LoadSpectrum, 'days'> {
+  days: { day: number; write: (out: ByteWriter) => void }[];
+}
+
+/**
+ * As `encodeSpectrum`, for whoever has the cycles in another form.
+ *
+ * @param whole whether all levels are whole numbers; the days must write accordingly
+ */
+export function encodeParts(parts: SpectrumParts, whole: boolean): Uint8Array {
+  const { step, days, residue, residueDay } = parts;
+  out.clear();
   out.byte(VERSION);
   out.byte(whole ? WHOLE_LEVELS : RAW_LOADS);
   out.double(step);
-  out.whole(spectrum.samples);
-  out.whole(spectrum.turningPoints);
+  out.whole(parts.samples);
+  out.whole(parts.turningPoints);
   out.whole(residue.length);
   let previous = 0;
   for (const load of residue) {
@@ -44,10 +65,10 @@ export function encodeSpectrum(spectrum: LoadSpectrum): Uint8Array {
   }
   out.whole(days.length);
   previousDay = 0;
-  for (const { day, cycles } of days) {
+  for (const { day, write } of days) {
     out.signed(day - previousDay);
     previousDay = day;
-    writeCycles(out, cycles, whole);
+    write(out);
   }
   out.checkSum();
   return out.finish();
