@@ -9,7 +9,7 @@ import { ButtonLink, PlainButton } from '../../components/plain-button/plain-but
 import { DataTable, type DataTableColumn } from '../../components/tables/data-table';
 import type { Formatter } from '../../lib/formatting/format';
 import { useFormat } from '../../lib/formatting/use-format';
-import { loadLogStateWords } from './load-log-states';
+import { loadLogWords } from './load-log-states';
 import { loadLogQueries } from './load-logs.queries';
 
 interface LoadLogListProps {
@@ -77,8 +77,8 @@ function columns(format: Formatter, zone: string): DataTableColumn<LoadLogDto>[]
     {
       key: 'state',
       title: 'State',
-      render: (log) => `${loadLogStateWords(log.state).word}${progressOf(log, format)}`,
-      value: (log) => loadLogStateWords(log.state).word,
+      render: (log) => `${loadLogWords(log).word}${progressOf(log, format)}`,
+      value: (log) => loadLogWords(log).word,
     },
     {
       key: 'from',

@@ -1,4 +1,4 @@
-import type { LoadLogState } from '@stayledger/shared/contracts/load-logs';
+import type { LoadLogDto, LoadLogState } from '@stayledger/shared/contracts/load-logs';
 
 interface StateWords {
   /** The word in tables. */
@@ -46,4 +46,17 @@ const WORDS: Record<LoadLogState, StateWords> = {
 /** How a load log's state reads to people. */
 export function loadLogStateWords(state: LoadLogState): StateWords {
   return WORDS[state];
+}
+
+const GIVEN_UP: StateWords = {
+  word: 'Upload given up',
+  meaning: 'The file never came in full. Add it anew.',
+  moving: false,
+};
+
+/** The words of a log's state, told apart where the server keeps one state for two things that happened. */
+export function loadLogWords(log: Pick<LoadLogDto, 'state' | 'failure'>): StateWords {
+  const code = log.failure?.code;
+  if (log.state === 'failed' && (code === 'upload-cancelled' || code === 'upload-abandoned')) return GIVEN_UP;
+  return loadLogStateWords(log.state);
 }

@@ -14,7 +14,7 @@ import { DecisionFoot } from '../../features/load-logs/decision-foot';
 import { FindingList } from '../../features/load-logs/finding-list';
 import { highestMomentOfDay } from '../../features/load-logs/highest-moment';
 import { LoadLogFacts } from '../../features/load-logs/load-log-facts';
-import { loadLogStateWords } from '../../features/load-logs/load-log-states';
+import { loadLogStateWords, loadLogWords } from '../../features/load-logs/load-log-states';
 import { loadLogQueries } from '../../features/load-logs/load-logs.queries';
 import styles from '../../features/load-logs/load-log-page.module.css';
 import { ReceivingLog } from '../../features/load-logs/receiving-log';
@@ -45,7 +45,7 @@ export function LoadLogReviewPage() {
                 <Link to={paths.loadLogs.to(loaded.vesselId)}>Loads</Link>
               </>
             }
-            below={`${loadLogStateWords(loaded.state).word}. ${loadLogStateWords(loaded.state).meaning}`}
+            below={`${loadLogWords(loaded).word}. ${loadLogWords(loaded).meaning}`}
           />
           <QueryView query={vessel}>{(found) => <LogInItsState log={loaded} vessel={found} />}</QueryView>
         </>
@@ -78,7 +78,7 @@ function LogInItsState({ log, vessel }: { log: LoadLogDto; vessel: VesselDto }) 
 function FailedLog({ log, vessel, mayUpload }: { log: LoadLogDto; vessel: VesselDto; mayUpload: boolean }) {
   return (
     <>
-      <Attention role="alert">
+      <Attention>
         <p>{log.failure?.message ?? 'The file could not be read.'}</p>
       </Attention>
       {log.findings.length > 0 && <FindingList findings={log.findings} zone={vessel.zone} />}
