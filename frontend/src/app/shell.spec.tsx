@@ -89,6 +89,23 @@ describe('signed-out people', () => {
   });
 });
 
+describe('a session that ends', () => {
+  it('leads to the sign-in page from the page that noticed, and remembers the way back', async () => {
+    let session = sampleSession('rigger');
+    fakeApi({
+      'GET /auth/session': () => reply(sessionSchema, session),
+      'GET /auth/demo-sign-ins': noDemo,
+      'GET /vessels': () => {
+        session = signedOut;
+        return refusal(401, 'signed-out', 'Sign in again.');
+      },
+    });
+    const { router } = renderApp('/fleet?sort=name');
+    await screen.findByRole('heading', { name: 'Sign in' });
+    expect(router.state.location.search).toBe('?from=%2Ffleet%3Fsort%3Dname');
+  });
+});
+
 describe('the navigation', () => {
   it.each<[Role, string[]]>([
     ['surveyor', ['Fleet', 'Reference data']],

@@ -1,4 +1,4 @@
-import { QueryClient } from '@tanstack/react-query';
+import type { QueryClient } from '@tanstack/react-query';
 import { render } from '@testing-library/react';
 import userEvent from '@testing-library/user-event';
 import type { ReactNode } from 'react';
@@ -6,6 +6,7 @@ import { createMemoryRouter, RouterProvider } from 'react-router-dom';
 import type { SessionDto } from '@stayledger/shared/contracts/auth';
 import { Providers } from '../app/providers';
 import { routes } from '../app/router';
+import { createQueryClient } from '../lib/query-client';
 import { SessionProvider } from '../lib/session';
 import { sampleSession } from './samples';
 
@@ -33,7 +34,9 @@ export function renderWithin(element: ReactNode, session: SessionDto = sampleSes
   return { ...view, router, user: userEvent.setup() };
 }
 
-/** As the real client, without waiting between retries. */
+/** The real client, without waiting between retries. */
 function quietClient(): QueryClient {
-  return new QueryClient({ defaultOptions: { queries: { retry: false }, mutations: { retry: false } } });
+  const client = createQueryClient();
+  client.setDefaultOptions({ queries: { retry: false }, mutations: { retry: false } });
+  return client;
 }
