@@ -11,7 +11,13 @@ async function main(): Promise<void> {
   const env = readEnv();
   const app = await createApp(env);
   await app.listen(env.PORT, env.HOST);
-  new Logger('main').log(`ready on ${await app.getUrl()}`);
+  const logger = new Logger('main');
+  logger.log(`ready on ${await app.getUrl()}`);
+  if (env.REDIS_URL === undefined) {
+    logger.warn(
+      'REDIS_URL is not set: load logs are taken in and wait, since no worker can be reached from here',
+    );
+  }
 
   let stopping = false;
   const stop = (): void => {

@@ -1,10 +1,18 @@
-import { createHash } from 'node:crypto';
+import { createHmac } from 'node:crypto';
 import { EntityManager } from '@mikro-orm/postgresql';
-import { Injectable, type CallHandler, type ExecutionContext, type NestInterceptor } from '@nestjs/common';
+import {
+  Inject,
+  Injectable,
+  type CallHandler,
+  type ExecutionContext,
+  type NestInterceptor,
+} from '@nestjs/common';
 import type { Request, Response } from 'express';
 import { from, lastValueFrom, type Observable } from 'rxjs';
 import { z } from 'zod';
 import { Clock } from '../clock/clock.js';
+import { ENV } from '../../config/config.module.js';
+import type { Env } from '../../config/env.js';
 import { IdempotencyMismatchError, InvalidRequestError } from '../errors/app-error.js';
 
 const KEEP_MS = 24 * 3_600_000;
@@ -25,6 +33,7 @@ export class IdempotencyInterceptor implements NestInterceptor {
   constructor(
     private readonly em: EntityManager,
     private readonly clock: Clock,
+    @Inject(ENV) private readonly env: Env,
   ) {}
 
   intercept(context: ExecutionContext, next: CallHandler): Observable<unknown> {
@@ -43,7 +52,7 @@ export class IdempotencyInterceptor implements NestInterceptor {
   private async once(key: string, request: Request, response: Response, next: CallHandler): Promise<unknown> {
     const userId = request.user?.userId ?? '';
     const route = request.path;
-    const requestHash = hashOf(route, request.body);
+    const requestHash = this.hashOf(route, request.body);
     const now = this.clock.now();
     await this.em.execute('delete from idempotency_key where user_id = ? and created_at < ?', [
       userId,
@@ -73,13 +82,16 @@ export class IdempotencyInterceptor implements NestInterceptor {
     ]);
     return reply;
   }
-}
 
-/** The same request has the same bytes: our client repeats what it sent, it does not build it anew. */
-function hashOf(route: string, body: unknown): string {
-  return createHash('sha256')
-    .update(route)
-    .update('\0')
-    .update(JSON.stringify(body ?? null))
-    .digest('hex');
+  /**
+   * The same request has the same bytes: our client repeats what it sent, it does not build it anew. Keyed, since a
+   * body may hold a password, which a plain hash would lay open to guessing.
+   */
+  private hashOf(route: string, body: unknown): string {
+    return createHmac('sha256', this.env.SESSION_SECRET)
+      .update(route)
+      .update('\0')
+      .update(JSON.stringify(body ?? null))
+      .digest('hex');
+  }
 }
