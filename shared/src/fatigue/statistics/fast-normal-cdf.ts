@@ -12,7 +12,7 @@ const [D0, D1, D2, D3, D4, D5, D6, D7] = DENOMINATOR;
 const RATIONAL_BELOW = 7.07106781186547;
 
 /**
- * Standard normal distribution function to ten digits and more, several times as fast as {@link normalCdf}: forecasts ask
+ * Standard normal distribution function to nine digits and more, several times as fast as {@link normalCdf}: forecasts ask
  * it millions of times.
  *
  * Source: Hart et al., Computer Approximations (1968), as arranged by West (2005), from memory; checked against
