@@ -30,6 +30,8 @@ export interface FirmVesselAnswer {
   withoutDecisions: boolean;
   /** True where no plan of the vessel keeps each task as early as it could be alone: one has to give way. */
   hasToGiveWay: boolean;
+  /** What was settled by hand and cannot be done at all, in words. */
+  impossible: string[];
 }
 
 /** Whoever answers: this thread, or a pool of others. Null: no option fits the room. */
@@ -62,6 +64,7 @@ export function firmVessel(request: FirmVesselRequest, solver: ProgramSolver): F
       boundMinor: solved.bound * MINOR_PER_PROGRAM_UNIT,
       withoutDecisions,
       hasToGiveWay: lateAllowed && !request.lateAllowed,
+      impossible: solved.built.impossible,
     };
   };
   const first = attempt(request.lateAllowed, false);

@@ -15,6 +15,7 @@ import { lateTasksOf } from './late-tasks.js';
 import type { ProgramSolver } from './mixed-integer-program.js';
 import { NO_DECISIONS, VISIT_KINDS } from './plan-input.js';
 import type { PlanInput } from './plan-input.js';
+import { CONTRADICTION } from './plan-vessel.js';
 import { planProblems } from './plan-problems.js';
 import { readPlan } from './read-plan.js';
 import { relaxedPrices } from './relaxed-prices.js';
@@ -106,6 +107,7 @@ class FirmRun {
   readonly #options: VesselOption[][];
   readonly #withoutDecisions: boolean[];
   readonly #givesWay: boolean[];
+  readonly #remarks: string[][];
   readonly #beyondMinor: number;
   #prices: number[];
   #boundMinor = -Infinity;
@@ -121,6 +123,7 @@ class FirmRun {
     this.#options = firm.vessels.map(() => []);
     this.#withoutDecisions = firm.vessels.map(() => false);
     this.#givesWay = firm.vessels.map(() => false);
+    this.#remarks = firm.vessels.map(() => []);
     this.#prices = this.#limits.map(() => 0);
     this.#beyondMinor = lastResortMinor(firm);
   }
@@ -128,7 +131,8 @@ class FirmRun {
   /** Every vessel's cheapest plan as if it were alone: the sum is the first bound. */
   async begin(): Promise<void> {
     const answers = await this.#askAll(this.#prices, false);
-    answers.forEach(({ option, withoutDecisions, hasToGiveWay }, vessel) => {
+    answers.forEach(({ option, withoutDecisions, hasToGiveWay, impossible }, vessel) => {
+      this.#remarks[vessel] = withoutDecisions ? [CONTRADICTION] : impossible;
       this.#withoutDecisions[vessel] = withoutDecisions;
       this.#givesWay[vessel] = hasToGiveWay;
       this.#keep(vessel, option);
@@ -235,12 +239,9 @@ class FirmRun {
     const totalMinor = sum(picked.map(({ costMinor }) => costMinor));
     const weight = sum(picked.map((option) => weightMinor(option, firm)));
     const vessels = firm.vessels.map(({ vesselId, name }, vessel) => {
-      const without = this.#withoutDecisions[vessel];
       const model = vesselModel(this.#inputOf(vessel));
       const { choice } = picked[vessel];
-      const remarks = without
-        ? ['What has been settled by hand contradicts itself, so this plan was made without it.']
-        : [];
+      const remarks = this.#remarks[vessel];
       return {
         vesselId,
         name,

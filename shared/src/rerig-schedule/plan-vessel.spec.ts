@@ -59,7 +59,10 @@ function bestByTryingVisits(input: PlanInput): Best {
       const kind = kinds[next];
       const terms = kind === null ? undefined : task.terms[kind];
       const doneDay = Math.max(windows[next].startDay, asOf + task.leadDays);
-      if (kind === null || terms === undefined || doneDay > windows[next].closeDay) continue;
+      const isKept = input.decisions.kept.some(
+        (keep) => keep.taskId === task.id && keep.windowId === windows[next].window.id,
+      );
+      if (kind === null || terms === undefined || isKept || doneDay > windows[next].closeDay) continue;
       const again = task.againAfterDays === null ? Infinity : doneDay + task.againAfterDays;
       const rest = cheapestFrom(task, next + 1, again);
       const here: Best = {
@@ -72,9 +75,16 @@ function bestByTryingVisits(input: PlanInput): Best {
   };
   const tryFrom = (at: number, visitsMinor: number): void => {
     if (at < windows.length) {
+      const { id } = windows[at].window;
+      const locked = input.decisions.locked.filter(({ windowId }) => windowId === id).map(({ kind }) => kind);
+      const isBarred = (kind: VisitKind): boolean =>
+        input.decisions.barred.some(
+          (bar) => bar.windowId === id && (bar.kind === undefined || bar.kind === kind),
+        );
       kinds[at] = null;
-      tryFrom(at + 1, visitsMinor);
-      for (const kind of windows[at].window.kinds) {
+      if (locked.length === 0) tryFrom(at + 1, visitsMinor);
+      const offered = locked.length > 0 ? locked : windows[at].window.kinds.filter((kind) => !isBarred(kind));
+      for (const kind of offered) {
         kinds[at] = kind;
         const costMinor = withContingency(input.visitTerms[kind]!.costMinor, kind, input.contingencyShare);
         tryFrom(at + 1, visitsMinor + costMinor);
@@ -173,6 +183,18 @@ describe('the optimum against trying everything', () => {
         ...bestByTryingVisits(input),
       });
       expect(plan.proof.boundMinor).toBe(plan.totalMinor);
+    }
+  });
+
+  it.each([1, 2])('equals it on 60 cases with visits locked and barred by hand (block %i)', (block) => {
+    for (let at = 0; at < 60; at++) {
+      const seed = block * 9000 + at;
+      const input = smallPlan(smallRandom(seed), { windows: 7, tasks: 4, coupled: false, settled: true });
+      const plan = planVessel(input, solver, EXACT);
+      expect({ seed, lateDays: plan.lateDays, totalMinor: plan.totalMinor }).toEqual({
+        seed,
+        ...bestByTryingVisits(input),
+      });
     }
   });
 

@@ -21,6 +21,10 @@ export type PlanPreference = 'least-cost' | 'fewest-visits' | 'latest-allowed';
 /** Stops of the solver for one plan: a gap of 0.1 % within 10 s. */
 export const DEFAULT_LIMITS: SolveLimits = { timeLimitS: 10, relativeGap: 0.001 };
 
+/** Remark on a plan made without decisions that no plan can follow. */
+export const CONTRADICTION =
+  'What has been settled by hand contradicts itself, so this plan was made without it.';
+
 const FIRST_MEASURE: Record<PlanPreference, Measure> = {
   'least-cost': 'cost',
   'fewest-visits': 'visits',
@@ -60,9 +64,7 @@ export function planVessel(
   const solution =
     solvedBy(free, first, {}, solver, limits) ?? leastLatePlan(free, first, undefined, solver, limits);
   if (solution === null) throw new Error('No plan exists, not even a late one.');
-  return planOf(free, solution, [
-    'What has been settled by hand contradicts itself, so this plan was made without it.',
-  ]);
+  return planOf(free, solution, [CONTRADICTION]);
 }
 
 /** Least lateness first, then the measure asked for within that lateness. */

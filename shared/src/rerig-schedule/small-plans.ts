@@ -1,6 +1,6 @@
 import { dayNumber, dayOfNumber } from '../fatigue/life/days.js';
 import { NO_DECISIONS, VISIT_KINDS } from './plan-input.js';
-import type { PlanInput, PlanTask, PlanWindow, VisitKind } from './plan-input.js';
+import type { PlanDecisions, PlanInput, PlanTask, PlanWindow, VisitKind } from './plan-input.js';
 
 /** A small generator of even chance from 0 to 1 (mulberry32; from memory), for invented cases. */
 export function smallRandom(seed: number): () => number {
@@ -18,11 +18,11 @@ export function smallRandom(seed: number): () => number {
  * overdue, some that hardly any window allows.
  *
  * @param random the only source of chance
- * @param size most windows and tasks, and whether tasks may ask for one another
+ * @param size most windows and tasks, whether tasks may ask for one another, and whether something is settled by hand
  */
 export function smallPlan(
   random: () => number,
-  size: { windows: number; tasks: number; coupled: boolean },
+  size: { windows: number; tasks: number; coupled: boolean; settled?: boolean },
 ): PlanInput {
   const whole = (least: number, most: number): number => least + Math.floor(random() * (most - least + 1));
   const asOf = dayNumber('2027-03-01');
@@ -69,6 +69,22 @@ export function smallPlan(
     orderMarginDays: 14,
     windows,
     tasks,
-    decisions: NO_DECISIONS,
+    decisions: size.settled === true ? someDecisions(random, windows, tasks) : NO_DECISIONS,
+  };
+}
+
+function someDecisions(
+  random: () => number,
+  windows: readonly PlanWindow[],
+  tasks: readonly PlanTask[],
+): PlanDecisions {
+  const some = (share: number): PlanWindow[] => windows.filter(() => random() < share);
+  return {
+    locked: some(0.2).map(({ id }) => ({ windowId: id, kind: VISIT_KINDS[Math.floor(3 * random())] })),
+    barred: some(0.2).map(({ id }) =>
+      random() < 0.5 ? { windowId: id } : { windowId: id, kind: VISIT_KINDS[Math.floor(3 * random())] },
+    ),
+    pinned: [],
+    kept: tasks.flatMap(({ id }) => some(0.15).map((window) => ({ taskId: id, windowId: window.id }))),
   };
 }
