@@ -29,10 +29,23 @@ async function placesOf(role: string, get: (path: string) => Promise<unknown>): 
   const notFound = { name: `${role}-not-found`, address: '/nowhere' };
   if (role === 'insurer') return [{ name: 'portfolio', address: '/portfolio' }, profile];
   if (role === 'administrator') return [{ name: 'administration', address: '/administration' }, profile];
-  if (role === 'owner') return [{ name: 'my-vessel', address: '/my-vessel' }, profile];
   const { items: vessels } = (await get('/api/vessels')) as {
     items: { id: string; counts: { assessed: number; logsWaiting: number } }[];
   };
+  const [first] = vessels;
+  if (role === 'owner') {
+    const { items } = (await get(`/api/vessels/${first.id}/rig`)) as {
+      items: { part: { id: string } | null }[];
+    };
+    const part = items.find((position) => position.part !== null)?.part;
+    return [
+      { name: 'my-vessel', address: '/my-vessel' },
+      { name: 'owner-vessel', address: `/vessels/${first.id}` },
+      { name: 'owner-loads', address: `/vessels/${first.id}/load-logs` },
+      { name: 'owner-part', address: `/parts/${part?.id ?? ''}` },
+      profile,
+    ];
+  }
   const places: Place[] = [
     { name: 'fleet', address: '/fleet' },
     { name: 'register-vessel', address: '/vessels/new' },
@@ -40,7 +53,6 @@ async function placesOf(role: string, get: (path: string) => Promise<unknown>): 
     profile,
     notFound,
   ];
-  const [first] = vessels;
   places.push(
     { name: 'vessel-edit', address: `/vessels/${first.id}/edit` },
     { name: 'usage-plan', address: `/vessels/${first.id}/usage-plan` },

@@ -1,6 +1,14 @@
-import type { Browser } from 'playwright-core';
+import type { Browser, Page } from 'playwright-core';
 import { afterAll, afterEach, beforeAll, describe, expect, inject, it } from 'vitest';
-import { demoSignIns, newVisitor, openBrowser, screenshot, settled, type Visitor } from './harness/browser';
+import {
+  demoSignIns,
+  newVisitor,
+  openBrowser,
+  pictureOfFailure,
+  screenshot,
+  settled,
+  type Visitor,
+} from './harness/browser';
 import { choose } from './harness/fields';
 import { syntheticLog } from './harness/synthetic-log';
 
@@ -18,8 +26,7 @@ describe('a load log in, a date out', () => {
     visitor = await newVisitor(browser, inject('baseUrl'));
   });
   afterEach(async ({ task }) => {
-    if (task.result?.state === 'fail')
-      await screenshot(visitor.page, `failed-${task.name}`.replaceAll(' ', '-'));
+    if (task.result?.state === 'fail') await pictureOfFailure(visitor.page, task.name);
   });
   afterAll(async () => {
     await browser?.close();
@@ -156,10 +163,7 @@ describe('a load log in, a date out', () => {
 
   it('notices the same file and does not post it twice', async () => {
     const { page } = visitor;
-    await page.goto('/fleet');
-    await page.getByRole('table', { name: 'Vessels' }).getByRole('link', { name: VESSEL }).click();
-    await page.getByRole('link', { name: 'Loads', exact: true }).click();
-    await page.getByRole('link', { name: 'Add load log' }).click();
+    await openAddLoadLog(page);
     await page.getByLabel('Drop a load log here, or choose it').setInputFiles({
       name: 'narrows-june-again.csv',
       mimeType: 'text/csv',
@@ -180,12 +184,29 @@ describe('a load log in, a date out', () => {
     await page.getByText(/^Set aside by/).waitFor();
   });
 
+  it('throws an unfinished upload away when asked to', async () => {
+    const { page } = visitor;
+    await openAddLoadLog(page);
+    await page.getByLabel('Drop a load log here, or choose it').setInputFiles({
+      name: 'narrows-july.csv',
+      mimeType: 'text/csv',
+      buffer: syntheticLog({ columns: COLUMNS, rows: 600, startOn: '2026-07-02' }),
+    });
+    await page.route('**/api/uploads/**', (route) =>
+      route.request().method() === 'PATCH' ? route.abort('connectionreset') : route.continue(),
+    );
+    await page.getByRole('button', { name: 'Start upload' }).click();
+    await page.getByText('The connection was lost. Trying again.').waitFor();
+    await page.getByRole('button', { name: 'Cancel the upload…' }).click();
+    await page.getByRole('button', { name: 'Throw it away' }).click();
+    await page.unroute('**/api/uploads/**');
+    const row = page.getByRole('row').filter({ hasText: 'narrows-july.csv' });
+    await row.getByText('Upload given up').waitFor();
+  });
+
   it('says what is wrong with a file that is no load log', async () => {
     const { page } = visitor;
-    await page.goto('/fleet');
-    await page.getByRole('table', { name: 'Vessels' }).getByRole('link', { name: VESSEL }).click();
-    await page.getByRole('link', { name: 'Loads', exact: true }).click();
-    await page.getByRole('link', { name: 'Add load log' }).click();
+    await openAddLoadLog(page);
     await page.getByLabel('Drop a load log here, or choose it').setInputFiles({
       name: 'sail-plan.csv',
       mimeType: 'text/csv',
@@ -194,3 +215,10 @@ describe('a load log in, a date out', () => {
     await page.getByRole('alert').getByText('not a text table').waitFor();
   });
 });
+
+async function openAddLoadLog(page: Page): Promise<void> {
+  await page.goto('/fleet');
+  await page.getByRole('table', { name: 'Vessels' }).getByRole('link', { name: VESSEL }).click();
+  await page.getByRole('link', { name: 'Loads', exact: true }).click();
+  await page.getByRole('link', { name: 'Add load log' }).click();
+}

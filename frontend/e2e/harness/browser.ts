@@ -7,7 +7,9 @@ import { chromium, type Browser, type BrowserContext, type Page } from 'playwrig
 /** Debian's browser; `STAYLEDGER_CHROMIUM` names another. */
 const EXECUTABLE = process.env.STAYLEDGER_CHROMIUM ?? '/usr/bin/chromium';
 
-export const SCREENSHOTS = process.env.STAYLEDGER_SCREENSHOTS ?? join(tmpdir(), 'stayledger-screenshots');
+/** Folder for pictures of every page; without it only failures leave one, in the temporary folder. */
+const SCREENSHOTS = process.env.STAYLEDGER_SCREENSHOTS;
+const FAILURES = join(tmpdir(), 'stayledger-e2e-failures');
 
 export function openBrowser(): Promise<Browser> {
   return chromium.launch({
@@ -20,15 +22,12 @@ export function openBrowser(): Promise<Browser> {
 export interface Visitor {
   context: BrowserContext;
   page: Page;
-  /** What the browser complained about: errors of the page and messages of the console at level error. */
+  /**
+   * What the browser complained about: errors of the page and messages of the console at level error, among them every
+   * refusal by the content security policy.
+   */
   complaints: string[];
 }
-
-/**
- * The scroll lock of an open modal window writes one style element without our nonce. The browser refuses it and says
- * so; nothing but the lock is lost. It is the only refusal we know of and accept.
- */
-const KNOWN_REFUSAL = /Applying inline style violates.*style-src/;
 
 export interface VisitorOptions {
   width?: number;
@@ -55,7 +54,7 @@ export async function newVisitor(
   const complaints: string[] = [];
   page.on('pageerror', (error) => complaints.push(`page error: ${error.message}`));
   page.on('console', (message) => {
-    if (message.type() === 'error' && !KNOWN_REFUSAL.test(message.text())) complaints.push(message.text());
+    if (message.type() === 'error') complaints.push(message.text());
   });
   return { context, page, complaints };
 }
@@ -104,9 +103,19 @@ export async function accessibilityViolations(page: Page): Promise<string[]> {
   });
 }
 
+/** A picture of the whole page, where somebody asked for pictures. */
 export async function screenshot(page: Page, name: string): Promise<void> {
-  mkdirSync(SCREENSHOTS, { recursive: true });
-  await page.screenshot({ path: join(SCREENSHOTS, `${name}.png`), fullPage: true });
+  if (SCREENSHOTS) await savePicture(page, SCREENSHOTS, name);
+}
+
+/** A picture of the page on which a journey failed. */
+export async function pictureOfFailure(page: Page, test: string): Promise<void> {
+  await savePicture(page, SCREENSHOTS ?? FAILURES, `failed-${test.replaceAll(/\W+/g, '-')}`);
+}
+
+async function savePicture(page: Page, folder: string, name: string): Promise<void> {
+  mkdirSync(folder, { recursive: true });
+  await page.screenshot({ path: join(folder, `${name}.png`), fullPage: true });
 }
 
 /** Waits until the page has nothing more to fetch and no part of it says that it is loading. */

@@ -1,7 +1,9 @@
 import type { LogFindingDto, LogReviewDto } from '@stayledger/shared/contracts/load-logs';
 import { useId, useMemo, type KeyboardEvent, type PointerEvent } from 'react';
+import type { Formatter } from '../../lib/formatting/format';
 import { useFormat } from '../../lib/formatting/use-format';
 import { timeTicks } from './time-ticks';
+import { brokenTimeScale, type BrokenTimeScale, type TimeStretch } from './broken-time-scale';
 import styles from './trace-chart.module.css';
 import { loadTicks, nearestIndex, tracePath } from './trace-path';
 import { useElementWidth } from './use-element-width';
@@ -12,8 +14,8 @@ interface TraceChartProps {
   trace: Trace;
   findings: readonly LogFindingDto[];
   zone: string;
-  fromMs: number;
-  toMs: number;
+  /** Recorded time of the whole log, the same for all its traces. */
+  stretches: readonly TimeStretch[];
   /** The moment all traces of the page point at, so that one gust is seen on every channel. */
   cursorMs: number | null;
   onCursor: (atMs: number) => void;
@@ -24,7 +26,7 @@ const MARGIN = { top: 8, right: 8, bottom: 40, left: 52 };
 const TICK_WIDTH = 90;
 
 /** Highest and lowest load of one channel over the time of the log, as one band. */
-export function TraceChart({ trace, findings, zone, fromMs, toMs, cursorMs, onCursor }: TraceChartProps) {
+export function TraceChart({ trace, findings, zone, stretches, cursorMs, onCursor }: TraceChartProps) {
   const format = useFormat();
   const titleId = useId();
   const [frameRef, frameWidth] = useElementWidth<HTMLDivElement>(640);
@@ -39,18 +41,15 @@ export function TraceChart({ trace, findings, zone, fromMs, toMs, cursorMs, onCu
   const tickDecimals = Math.max(0, -Math.floor(Math.log10(step)));
   const lowKn = format.forceToKn(yTicks[0]);
   const highKn = format.forceToKn(yTicks[yTicks.length - 1]);
-  const scale = { fromMs, toMs, lowKn, highKn, width, height: PLOT_HEIGHT };
+  const scale = useMemo(() => brokenTimeScale(stretches, width), [stretches, width]);
   const path = useMemo(
-    () => tracePath(trace, { fromMs, toMs, lowKn, highKn, width, height: PLOT_HEIGHT }),
-    [trace, fromMs, toMs, lowKn, highKn, width],
+    () => tracePath(trace, { xOf: scale.xOf, lowKn, highKn, height: PLOT_HEIGHT }),
+    [trace, scale, lowKn, highKn],
   );
-  const xTicks = useMemo(
-    () => timeTicks(fromMs, toMs, zone, Math.max(2, Math.floor(width / TICK_WIDTH))),
-    [fromMs, toMs, zone, width],
-  );
-  const xOf = (atMs: number): number => ((atMs - fromMs) / (toMs - fromMs || 1)) * width;
+  const xLabels = useMemo(() => axisLabels(scale, zone, format), [scale, zone, format]);
+  const xOf = scale.xOf;
   const yOf = (value: number): number =>
-    PLOT_HEIGHT - ((value - scale.lowKn) / (scale.highKn - scale.lowKn || 1)) * PLOT_HEIGHT;
+    PLOT_HEIGHT - ((value - lowKn) / (highKn - lowKn || 1)) * PLOT_HEIGHT;
 
   const index = cursorMs === null ? -1 : nearestIndex(trace.atMs, cursorMs);
   const readout =
@@ -82,12 +81,13 @@ export function TraceChart({ trace, findings, zone, fromMs, toMs, cursorMs, onCu
   }
   function onPointer(event: PointerEvent<HTMLDivElement>): void {
     const box = event.currentTarget.getBoundingClientRect();
-    const share = (event.clientX - box.left - MARGIN.left) / width;
-    moveTo(nearestIndex(trace.atMs, fromMs + share * (toMs - fromMs)));
+    moveTo(nearestIndex(trace.atMs, scale.msOf(event.clientX - box.left - MARGIN.left)));
   }
 
+  // Pauses are the breaks of the axis already.
   const marked = findings.filter(
-    (finding) => (finding.column === null || finding.column === trace.column) && finding.fromAt !== null,
+    ({ code, column, fromAt }) =>
+      code !== 'gap' && (column === null || column === trace.column) && fromAt !== null,
   );
   return (
     <section className={styles.trace} aria-labelledby={titleId}>
@@ -126,7 +126,8 @@ export function TraceChart({ trace, findings, zone, fromMs, toMs, cursorMs, onCu
             <path className={styles.band} d={path} />
             {marked.map((finding, position) => {
               const start = xOf(Date.parse(finding.fromAt ?? ''));
-              const end = finding.toAt === null ? start : xOf(Date.parse(finding.toAt));
+              // A finding in many places spans from the first to the last of them; only the first is marked.
+              const end = finding.toAt === null || finding.count > 1 ? start : xOf(Date.parse(finding.toAt));
               return (
                 <rect
                   key={`${finding.code}-${position}`}
@@ -139,12 +140,17 @@ export function TraceChart({ trace, findings, zone, fromMs, toMs, cursorMs, onCu
                 />
               );
             })}
-            <line className={styles.axis} y1={PLOT_HEIGHT} y2={PLOT_HEIGHT} x2={width} />
-            {xTicks.map((tick) => (
-              <g key={tick.atMs} transform={`translate(${xOf(tick.atMs).toFixed(1)} ${PLOT_HEIGHT})`}>
+            {scale.stretches.map(({ fromX, toX }, position) => (
+              <g key={fromX} transform={`translate(0 ${PLOT_HEIGHT})`}>
+                <line className={styles.axis} x1={fromX} x2={toX} />
+                {position > 0 && <BreakMark x={(scale.stretches[position - 1].toX + fromX) / 2} />}
+              </g>
+            ))}
+            {xLabels.map(({ x, text }) => (
+              <g key={x} transform={`translate(${x.toFixed(1)} ${PLOT_HEIGHT})`}>
                 <line className={styles.axis} y2={5} />
-                <text className={styles.tick} y={18} textAnchor="middle">
-                  {tickLabel(format.instant(tick.atMs, zone), tick.isDayStart)}
+                <text className={styles.tick} y={18} textAnchor={x > width - 24 ? 'end' : 'middle'}>
+                  {text}
                 </text>
               </g>
             ))}
@@ -172,6 +178,37 @@ export function TraceChart({ trace, findings, zone, fromMs, toMs, cursorMs, onCu
       <p className={styles.readout}>{readout}</p>
     </section>
   );
+}
+
+/** Two slanted strokes where time was cut out. */
+function BreakMark({ x }: { x: number }) {
+  return <path className={styles.axis} d={`M${x - 4} 5L${x} -5M${x} 5L${x + 4} -5`} />;
+}
+
+interface AxisLabel {
+  x: number;
+  text: string;
+}
+
+const LABEL_GAP = 54;
+
+/** The day where each stretch of recording begins, and round clock times or days where there is room between. */
+function axisLabels(scale: BrokenTimeScale, zone: string, format: Formatter): AxisLabel[] {
+  const isBroken = scale.stretches.length > 1;
+  const wanted = scale.stretches.flatMap(({ fromMs, toMs, fromX, toX }) => {
+    const ticks = timeTicks(fromMs, toMs, zone, Math.max(1, Math.floor((toX - fromX) / TICK_WIDTH)));
+    const inside = ticks.map(({ atMs, isDayStart }) => ({
+      x: scale.xOf(atMs),
+      text: tickLabel(format.instant(atMs, zone), isDayStart),
+    }));
+    return isBroken ? [{ x: fromX, text: tickLabel(format.instant(fromMs, zone), true) }, ...inside] : inside;
+  });
+  const kept: AxisLabel[] = [];
+  for (const label of wanted) {
+    const last = kept[kept.length - 1];
+    if (last === undefined || label.x - last.x >= LABEL_GAP) kept.push(label);
+  }
+  return kept;
 }
 
 /** "14 Mar 2027, 16:05" cut to what a tick has room for: the day where a day begins, else the time. */

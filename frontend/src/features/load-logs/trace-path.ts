@@ -6,11 +6,10 @@ export interface Envelope {
 }
 
 export interface TraceScale {
-  fromMs: number;
-  toMs: number;
+  /** Place of an instant on the time axis, in pixels. */
+  xOf: (atMs: number) => number;
   lowKn: number;
   highKn: number;
-  width: number;
   height: number;
 }
 
@@ -39,10 +38,8 @@ export function unbrokenStretches(atMs: readonly number[]): [number, number][] {
  * Every extreme is a corner of the band, so none is lost whatever the width.
  */
 export function tracePath(envelope: Envelope, scale: TraceScale): string {
-  const spanMs = scale.toMs - scale.fromMs || 1;
   const spanKn = scale.highKn - scale.lowKn || 1;
-  const x = (index: number): string =>
-    (((envelope.atMs[index] - scale.fromMs) / spanMs) * scale.width).toFixed(1);
+  const x = (index: number): string => scale.xOf(envelope.atMs[index]).toFixed(1);
   const y = (kn: number): string => (scale.height - ((kn - scale.lowKn) / spanKn) * scale.height).toFixed(1);
   const pieces: string[] = [];
   for (const [first, last] of unbrokenStretches(envelope.atMs)) {

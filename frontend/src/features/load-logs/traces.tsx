@@ -3,6 +3,7 @@ import { useMemo, useState } from 'react';
 import { CsvDownload } from '../../components/tables/csv-download';
 import { DataTable, type DataTableColumn } from '../../components/tables/data-table';
 import { useFormat } from '../../lib/formatting/use-format';
+import { recordedStretches } from './broken-time-scale';
 import { TraceChart, type Trace } from './trace-chart';
 import styles from './traces.module.css';
 
@@ -29,8 +30,7 @@ export function Traces({ traces, findings, zone, initialMs }: TracesProps) {
   // Thousands of rows: they are made when somebody opens the table, not before.
   const [isTableOpen, setIsTableOpen] = useState(false);
   const drawn = traces.filter((trace) => trace.atMs.length > 0);
-  const fromMs = Math.min(...drawn.map((trace) => trace.atMs[0]));
-  const toMs = Math.max(...drawn.map((trace) => trace.atMs[trace.atMs.length - 1]));
+  const stretches = useMemo(() => recordedStretches(traces), [traces]);
   const rows = useMemo(
     () =>
       traces.flatMap((trace) =>
@@ -97,14 +97,16 @@ export function Traces({ traces, findings, zone, initialMs }: TracesProps) {
   ];
   return (
     <>
+      {stretches.length > 1 && (
+        <p className="soft">Long pauses are cut out of the time axis where it shows two strokes.</p>
+      )}
       {drawn.map((trace) => (
         <TraceChart
           key={trace.column}
           trace={trace}
           findings={findings}
           zone={zone}
-          fromMs={fromMs}
-          toMs={toMs}
+          stretches={stretches}
           cursorMs={cursorMs}
           onCursor={setCursorMs}
         />
