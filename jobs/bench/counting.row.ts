@@ -1,10 +1,9 @@
-import { damageOfCounts } from '@stayledger/shared/fatigue/damage/damage-of-counts';
-import { astmCounts } from '@stayledger/shared/fatigue/rainflow/astm-counts';
+import { damageOfSpectrum } from '@stayledger/shared/fatigue/damage/damage-of-spectrum';
 import { RainflowCounter } from '@stayledger/shared/fatigue/rainflow/rainflow-counter';
 import type { BenchRow } from './bench-row.js';
 import { makeHistory } from './make-history.js';
 import { busyMs, median, ROUNDS } from './measure.js';
-import { DETAIL, expectSame, slowDamage } from './slow-damage.js';
+import { expectSame, MODEL, slowDamage } from './slow-damage.js';
 
 const SAMPLES = 8_000_000;
 const STEP_KN = 0.02;
@@ -43,7 +42,7 @@ async function speedOf(noiseKn: number): Promise<number> {
     const time = await busyMs(() => {
       const counter = new RainflowCounter({ step: STEP_KN });
       for (const block of blocks) counter.push(block, block.length, 0);
-      damage = damageOfCounts(astmCounts(counter.spectrum()), DETAIL);
+      damage = damageOfSpectrum(counter.spectrum(), MODEL).damage;
     });
     if (round > 0) times.push(time);
   }

@@ -1,14 +1,13 @@
 import { createReadStream } from 'node:fs';
-import { damageOfCounts } from '@stayledger/shared/fatigue/damage/damage-of-counts';
+import { damageOfSpectrum } from '@stayledger/shared/fatigue/damage/damage-of-spectrum';
 import { CsvScanner, type CsvLayout } from '@stayledger/shared/fatigue/load-history/csv-scanner';
 import { LoadLogCounter } from '@stayledger/shared/fatigue/load-history/load-log-counter';
-import { astmCounts } from '@stayledger/shared/fatigue/rainflow/astm-counts';
 import type { BenchRow } from './bench-row.js';
 import { LOG_CONFIG } from './log-config.js';
 import { makeLogFile } from './make-log-file.js';
-import { alternate } from './measure.js';
+import { alternate, busyMs } from './measure.js';
 import { readFileBlocks } from './read-file-blocks.js';
-import { DETAIL, expectSame } from './slow-damage.js';
+import { expectSame, MODEL } from './slow-damage.js';
 import { slowLogDamage } from './slow-log-damage.js';
 
 const ROWS = 5_000_000;
@@ -45,11 +44,14 @@ export const csvRow: BenchRow = {
     const damages = countFile(path);
     const slow = await slowLogDamage(path, ROWS);
     slow.forEach((damage, i) => expectSame(`load column ${i + 1}`, damages[i], damage));
-    const { loop, scan, count } = await alternate({
-      loop: () => countLineEnds(path),
-      scan: () => scanFile(path),
-      count: () => countFile(path),
-    });
+    const { loop, scan, count } = await alternate(
+      {
+        loop: () => countLineEnds(path),
+        scan: () => scanFile(path),
+        count: () => countFile(path),
+      },
+      busyMs,
+    );
     return { csvOverByteLoop: count / loop, scanOverByteLoop: scan / loop };
   },
 };
@@ -82,5 +84,5 @@ function scanFile(path: string): void {
 function countFile(path: string): number[] {
   const counter = new LoadLogCounter(LOG_CONFIG);
   readFileBlocks(path, (bytes) => counter.push(bytes));
-  return counter.finish().channels.map(({ spectrum }) => damageOfCounts(astmCounts(spectrum), DETAIL));
+  return counter.finish().channels.map(({ spectrum }) => damageOfSpectrum(spectrum, MODEL).damage);
 }

@@ -4,7 +4,7 @@ import type { BenchRow } from './bench-row.js';
 import { LOG_CONFIG } from './log-config.js';
 import { makeLogFile } from './make-log-file.js';
 import { median } from './measure.js';
-import { DETAIL, expectSame } from './slow-damage.js';
+import { expectSame, MODEL } from './slow-damage.js';
 import { slowLogDamage } from './slow-log-damage.js';
 
 const SMALL = 1_000_000;
@@ -14,8 +14,9 @@ const ROUNDS = 5;
 /** What a counting process says about itself. */
 interface Process {
   residentMiB: number;
-  busyMs: number;
-  damages: number[];
+  /** One of each for each file. */
+  busyMs: number[];
+  damages: number[][];
 }
 
 /** Memory and time of processes that do nothing but count, from the build, without a loader. */
@@ -47,28 +48,32 @@ export const growthRow: BenchRow = {
     const small = makeLogFile(SMALL);
     const large = makeLogFile(LARGE);
     const bare: number[] = [];
-    const processes: Record<'small' | 'large', Process[]> = { small: [], large: [] };
+    const memorySmall: number[] = [];
+    const memoryLarge: number[] = [];
+    const exponents: number[] = [];
+    let damages: number[] = [];
     for (let round = 0; round < ROUNDS; round++) {
       bare.push(runProcess().residentMiB);
-      processes.small.push(runProcess(small));
-      processes.large.push(runProcess(large));
+      memorySmall.push(runProcess(small).residentMiB);
+      memoryLarge.push(runProcess(large).residentMiB);
+      // The first count warms the compiler up; starting Node is no part of the growth either.
+      const timed = runProcess(small, small, large);
+      exponents.push(Math.log10(timed.busyMs[2] / timed.busyMs[1]));
+      damages = timed.damages[1];
     }
     const slow = await slowLogDamage(small, SMALL);
-    slow.forEach((damage, i) => expectSame(`load column ${i + 1}`, processes.small[0].damages[i], damage));
-    const memory = (of: Process[]) => median(of.map(({ residentMiB }) => residentMiB));
-    const time = (of: Process[]) => median(of.map(({ busyMs }) => busyMs));
+    slow.forEach((damage, i) => expectSame(`load column ${i + 1}`, damages[i], damage));
     return {
-      memoryMiB: memory(processes.large) - median(bare),
-      memoryGrowthMiB: memory(processes.large) - memory(processes.small),
-      exponent: Math.log10(time(processes.large) / time(processes.small)),
+      memoryMiB: median(memoryLarge) - median(bare),
+      memoryGrowthMiB: median(memoryLarge) - median(memorySmall),
+      exponent: median(exponents),
     };
   },
 };
 
-function runProcess(path?: string): Process {
-  const script = join(__dirname, 'count-file.mjs');
-  const output = execFileSync(process.execPath, path === undefined ? [script] : [script, path], {
-    env: { BENCH_CONFIG: JSON.stringify(LOG_CONFIG), BENCH_DETAIL: JSON.stringify(DETAIL) },
+function runProcess(...paths: string[]): Process {
+  const output = execFileSync(process.execPath, [join(__dirname, 'count-file.mjs'), ...paths], {
+    env: { BENCH_CONFIG: JSON.stringify(LOG_CONFIG), BENCH_MODEL: JSON.stringify(MODEL) },
     encoding: 'utf8',
   });
   return JSON.parse(output) as Process;

@@ -1,14 +1,13 @@
 import { createReadStream, createWriteStream, existsSync, renameSync } from 'node:fs';
 import { pipeline } from 'node:stream/promises';
 import { createGunzip, createGzip } from 'node:zlib';
-import { damageOfCounts } from '@stayledger/shared/fatigue/damage/damage-of-counts';
+import { damageOfSpectrum } from '@stayledger/shared/fatigue/damage/damage-of-spectrum';
 import { LoadLogCounter } from '@stayledger/shared/fatigue/load-history/load-log-counter';
-import { astmCounts } from '@stayledger/shared/fatigue/rainflow/astm-counts';
 import type { BenchRow } from './bench-row.js';
 import { LOG_CONFIG } from './log-config.js';
 import { makeLogFile } from './make-log-file.js';
 import { alternate } from './measure.js';
-import { DETAIL, expectSame } from './slow-damage.js';
+import { expectSame, MODEL } from './slow-damage.js';
 import { slowLogDamage } from './slow-log-damage.js';
 
 const ROWS = 1_000_000;
@@ -42,9 +41,7 @@ export const gzipRow: BenchRow = {
       count: async () => {
         const counter = new LoadLogCounter(LOG_CONFIG);
         for await (const chunk of inflated(path)) counter.push(chunk);
-        damages = counter
-          .finish()
-          .channels.map(({ spectrum }) => damageOfCounts(astmCounts(spectrum), DETAIL));
+        damages = counter.finish().channels.map(({ spectrum }) => damageOfSpectrum(spectrum, MODEL).damage);
       },
     });
     const slow = await slowLogDamage(plain, ROWS);
@@ -54,5 +51,7 @@ export const gzipRow: BenchRow = {
 };
 
 function inflated(path: string): AsyncIterable<Uint8Array> {
-  return createReadStream(path, { highWaterMark: PIECE }).pipe(createGunzip({ chunkSize: PIECE }));
+  return createReadStream(path, { highWaterMark: PIECE }).pipe(
+    createGunzip({ chunkSize: PIECE, readableHighWaterMark: 4 * PIECE }),
+  );
 }

@@ -1,13 +1,12 @@
 import { damageOfSpectrum } from '@stayledger/shared/fatigue/damage/damage-of-spectrum';
-import type { DetailModel } from '@stayledger/shared/fatigue/damage/detail-model';
 import type { LoadSpectrum } from '@stayledger/shared/fatigue/rainflow/load-spectrum';
 import { mergeAll } from '@stayledger/shared/fatigue/rainflow/merge-spectra';
 import { encodeSpectrum } from '@stayledger/shared/fatigue/rainflow/spectrum-codec';
 import { spectrumOf } from '@stayledger/shared/fatigue/rainflow/spectrum-of';
 import type { BenchRow } from './bench-row.js';
 import { makeHistory } from './make-history.js';
-import { alternate } from './measure.js';
-import { DETAIL, expectSame, slowDamage } from './slow-damage.js';
+import { alternate, busyMs } from './measure.js';
+import { expectSame, MODEL, slowDamage } from './slow-damage.js';
 
 const STEP_KN = 0.02;
 const LOGS = 1000;
@@ -16,16 +15,6 @@ const LOG_SAMPLES = 4 * 3600;
 /** A season of 100 days of six hours at 4 Hz. */
 const SEASON_DAYS = 100;
 const DAY_SAMPLES = 6 * 3600 * 4;
-
-const MODEL: DetailModel = {
-  ...DETAIL,
-  stressConcentration: 1,
-  sizeFactor: 1,
-  lifeDivisor: 1,
-  cutOff: 'as-curve',
-  mean: { kind: 'none' },
-  endBending: null,
-};
 
 /** What people wait for after the counting: a life joined from its logs, another curve over a season. */
 export const seasonRow: BenchRow = {
@@ -53,10 +42,13 @@ export const seasonRow: BenchRow = {
     const season = seasonSpectrum();
     let merged: LoadSpectrum = logs[0];
     let damage = 0;
-    const times = await alternate({
-      lifeMergeMs: () => (merged = mergeAll(logs)),
-      newCurveMs: () => (damage = damageOfSpectrum(season.spectrum, MODEL).damage),
-    });
+    const times = await alternate(
+      {
+        lifeMergeMs: () => (merged = mergeAll(logs)),
+        newCurveMs: () => (damage = damageOfSpectrum(season.spectrum, MODEL).damage),
+      },
+      busyMs,
+    );
     const onePass = spectrumOf(life, {
       step: STEP_KN,
       day: Int32Array.from(life, (_, i) => Math.floor(i / LOG_SAMPLES)),

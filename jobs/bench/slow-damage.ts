@@ -1,3 +1,5 @@
+import type { DetailModel } from '@stayledger/shared/fatigue/damage/detail-model';
+
 /** The detail all rows evaluate: MPa per kN and a curve of two slopes. */
 export const DETAIL = {
   factor: 9,
@@ -7,6 +9,17 @@ export const DETAIL = {
       { above: 0, m: 6, log10a: 17.756 },
     ],
   },
+};
+
+/** The same as a model for the engine. */
+export const MODEL: DetailModel = {
+  ...DETAIL,
+  stressConcentration: 1,
+  sizeFactor: 1,
+  lifeDivisor: 1,
+  cutOff: 'as-curve',
+  mean: { kind: 'none' },
+  endBending: null,
 };
 
 /**

@@ -1,15 +1,14 @@
 import { closeSync, openSync, readSync, statSync } from 'node:fs';
 import { join } from 'node:path';
 import { Worker } from 'node:worker_threads';
-import { damageOfCounts } from '@stayledger/shared/fatigue/damage/damage-of-counts';
-import { astmCounts } from '@stayledger/shared/fatigue/rainflow/astm-counts';
+import { damageOfSpectrum } from '@stayledger/shared/fatigue/damage/damage-of-spectrum';
 import { mergeSpectra } from '@stayledger/shared/fatigue/rainflow/merge-spectra';
 import { decodeSpectrum, encodeSpectrum } from '@stayledger/shared/fatigue/rainflow/spectrum-codec';
 import type { BenchRow } from './bench-row.js';
-import type { CountRangeAnswer, CountRangeTask } from './count-range.worker.js';
+import { LOG_CONFIG } from './log-config.js';
 import { makeLogFile } from './make-log-file.js';
 import { alternate } from './measure.js';
-import { DETAIL, expectSame } from './slow-damage.js';
+import { expectSame, MODEL } from './slow-damage.js';
 import { slowLogDamage } from './slow-log-damage.js';
 
 const ROWS = 5_000_000;
@@ -53,21 +52,28 @@ export const threadsRow: BenchRow = {
     });
     const slow = await slowLogDamage(path, ROWS);
     two.forEach((bytes, i) => {
-      expectSame(`load column ${i + 1}`, damageOfCounts(astmCounts(decodeSpectrum(bytes)), DETAIL), slow[i]);
+      expectSame(`load column ${i + 1}`, damageOfSpectrum(decodeSpectrum(bytes), MODEL).damage, slow[i]);
     });
     return { twoThreads: times.one / times.two };
   },
 };
 
+/** A stretch of a log, from one line start to another; 0 is the start of the file. */
+interface CountRangeTask {
+  path: string;
+  from: number;
+  to: number;
+}
+
 function startWorker(): Worker {
-  return new Worker(join(__dirname, 'count-range.worker.ts'));
+  return new Worker(join(__dirname, 'count-range.worker.mjs'), { execArgv: [] });
 }
 
 function count(worker: Worker, task: CountRangeTask): Promise<Uint8Array[]> {
   return new Promise((resolve, reject) => {
-    worker.once('message', (answer: CountRangeAnswer) => resolve(answer.spectra));
+    worker.once('message', (answer: { spectra: Uint8Array[] }) => resolve(answer.spectra));
     worker.once('error', reject);
-    worker.postMessage(task);
+    worker.postMessage({ ...task, config: LOG_CONFIG });
   });
 }
 

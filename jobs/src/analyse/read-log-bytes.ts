@@ -4,6 +4,8 @@ import type { Readable } from 'node:stream';
 import { createGunzip } from 'node:zlib';
 
 const READ_BYTES = 1 << 18;
+/** Inflated ahead, on a thread of its own, while what came before is counted. */
+const READ_AHEAD_BYTES = 1 << 20;
 
 /**
  * The bytes of a log file, decompressed when they begin as gzip does, whatever the file is called.
@@ -19,7 +21,7 @@ export async function readLogBytes(path: string): Promise<Readable> {
   }
   const bytes = createReadStream(path, { highWaterMark: READ_BYTES });
   if (magic[0] !== 0x1f || magic[1] !== 0x8b) return bytes;
-  const inflated = createGunzip({ chunkSize: READ_BYTES });
+  const inflated = createGunzip({ chunkSize: READ_BYTES, readableHighWaterMark: READ_AHEAD_BYTES });
   bytes.on('error', (error) => inflated.destroy(error));
   return bytes.pipe(inflated);
 }
