@@ -2,7 +2,7 @@ import { normalSource } from '../statistics/normal-source.js';
 import { answeringGroups } from '../usage/answering-groups.js';
 import type { UsageGroup, UsageState } from '../usage/usage-state.js';
 import { damageOnGrid, GRID_SIZE, lnNode } from './damage-on-grid.js';
-import { type LifeDraws, lnFactors, YEARS_IN_POOL } from './life-draws.js';
+import { type LifeDraws, lnFactors, type YearPool, YEARS_IN_POOL } from './life-draws.js';
 import type { DetailRecord, PartRecord, UseRecord } from './life-record.js';
 import { rateDoubt } from './rate-doubt.js';
 
@@ -242,27 +242,31 @@ class RateRecord {
   }
 
   /** Damage per hour of each year of a pool over that of the whole record, at the recorded gain. */
-  poolRatios(pool: readonly Int32Array[]): Float64Array {
-    const size = this.groups.length;
-    const middle = (GRID_SIZE - 1) / 2;
-    const hoursOf = (day: number): number => {
-      let hours = 0;
-      for (let g = 0; g < size; g++) hours += this.daysLogged[day * size + g];
-      return hours;
-    };
-    const hours = Float64Array.from({ length: this.use.days.length }, (_, day) => hoursOf(day));
-    const rateOf = (days: Iterable<number>): number => {
-      let damage = 0;
-      let time = 0;
-      for (const day of days) {
-        damage += this.grid[day * GRID_SIZE + middle];
-        time += hours[day];
-      }
-      return time > 0 ? damage / time : 0;
-    };
-    const whole = rateOf(hours.keys());
+  poolRatios(pool: YearPool | null): Float64Array {
     const ratios = new Float64Array(YEARS_IN_POOL).fill(1);
-    if (whole > 0) for (let j = 0; j < pool.length; j++) ratios[j] = rateOf(pool[j]) / whole;
+    if (pool === null) return ratios;
+    const size = this.groups.length;
+    const days = this.use.days.length;
+    const hours = new Float64Array(days);
+    const damage = new Float64Array(days);
+    let allHours = 0;
+    let allDamage = 0;
+    for (let day = 0; day < days; day++) {
+      for (let g = 0; g < size; g++) hours[day] += this.daysLogged[day * size + g];
+      damage[day] = this.grid[day * GRID_SIZE + (GRID_SIZE - 1) / 2];
+      allHours += hours[day];
+      allDamage += damage[day];
+    }
+    if (allDamage === 0) return ratios;
+    for (let j = 0; j < YEARS_IN_POOL; j++) {
+      let ofYear = 0;
+      let time = 0;
+      for (let i = j * pool.daysEach; i < (j + 1) * pool.daysEach; i++) {
+        ofYear += damage[pool.days[i]];
+        time += hours[pool.days[i]];
+      }
+      ratios[j] = (ofYear * allHours) / (time * allDamage);
+    }
     return ratios;
   }
 

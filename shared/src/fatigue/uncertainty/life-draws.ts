@@ -9,6 +9,12 @@ import { type UseRecord, CARRIED_IN_COV } from './life-record.js';
 export const YEARS_IN_POOL = 256;
 const MOST_DAYS_OF_A_YEAR = 366;
 
+/** Stretches of recorded days strung together in blocks, one after the other. */
+export interface YearPool {
+  daysEach: number;
+  days: Int32Array;
+}
+
 /** What is drawn once for the whole vessel: every part lives through the same loads, seasons and gains. */
 export interface LifeDraws {
   use: UseRecord;
@@ -27,9 +33,10 @@ export interface LifeDraws {
   /** Which year of the pool each coming year is; same layout. */
   yearPicks: Uint8Array;
   /** Recorded days that make up each year of the pool. */
-  yearPool: Int32Array[];
+  yearPool: YearPool;
   /** The same for the stretch of unlogged hours, and which one each draw takes. */
-  unloggedPool: Int32Array[];
+  /** Null where there are none. */
+  unloggedPool: YearPool | null;
   unloggedPicks: Uint8Array;
   /** Logarithm of true over recorded load, one array per calibration period. */
   lnGains: Float64Array[];
@@ -73,10 +80,10 @@ export function lifeDraws(
     ...seasonsOf(use, loggedHours, draws, years, streams('seasons')),
     yearPicks: picks(draws * years, streams('years')),
     yearPool: poolOf(logged, sum(Object.values(use.plannedHoursPerYear)) / hoursPerDay, streams('pool')),
-    unloggedPool: poolOf(logged, unlogged / hoursPerDay, streams('unlogged pool')),
+    unloggedPool: unlogged > 0 ? poolOf(logged, unlogged / hoursPerDay, streams('unlogged pool')) : null,
     unloggedPicks: picks(draws, streams('unlogged')),
     lnGains: use.calibrations.map(({ key, gainCov }) => lnFactors(draws, gainCov, streams(`gain ${key}`))),
-    carriedIn: lnFactors(draws, CARRIED_IN_COV, streams('carried in')).map(Math.exp),
+    carriedIn: factors(draws, CARRIED_IN_COV, streams('carried in')),
   };
 }
 
@@ -91,6 +98,12 @@ export function lnFactors(count: number, cov: number, random: RandomSource): Flo
   const normal = normalSource(random);
   const values = new Float64Array(count);
   for (let i = 0; i < count; i++) values[i] = lnSd * normal() - (lnSd * lnSd) / 2;
+  return values;
+}
+
+function factors(count: number, cov: number, random: RandomSource): Float64Array {
+  const values = lnFactors(count, cov, random);
+  for (let i = 0; i < count; i++) values[i] = Math.exp(values[i]);
   return values;
 }
 
@@ -126,12 +139,12 @@ function seasonsOf(
     .map((hours) => hours / loggedHours);
   const recordedSeasons = new Float64Array(draws);
   for (const weight of weights) {
-    const factors = lnFactors(draws, use.seasonCov, random);
-    for (let i = 0; i < draws; i++) recordedSeasons[i] += weight * Math.exp(factors[i]);
+    const ofSeason = factors(draws, use.seasonCov, random);
+    for (let i = 0; i < draws; i++) recordedSeasons[i] += weight * ofSeason[i];
   }
   return {
     recordedSeasons,
-    comingSeasons: lnFactors(draws * years, use.seasonCov, random).map(Math.exp),
+    comingSeasons: factors(draws * years, use.seasonCov, random),
   };
 }
 
@@ -141,14 +154,15 @@ function picks(count: number, random: RandomSource): Uint8Array {
   return values;
 }
 
-function poolOf(logged: readonly number[], daysWanted: number, random: RandomSource): Int32Array[] {
-  const length = Math.min(Math.max(Math.round(daysWanted), 1), MOST_DAYS_OF_A_YEAR);
+function poolOf(logged: readonly number[], daysWanted: number, random: RandomSource): YearPool {
+  const daysEach = Math.min(Math.max(Math.round(daysWanted), 1), MOST_DAYS_OF_A_YEAR);
   const block = usualBlockLength(logged.length);
-  return Array.from({ length: YEARS_IN_POOL }, () => {
-    const drawn = new Int32Array(length);
-    fillWithBlocks(drawn, 0, length, logged.length, block, random);
-    return drawn.map((index) => logged[index]);
-  });
+  const days = new Int32Array(YEARS_IN_POOL * daysEach);
+  for (let j = 0; j < YEARS_IN_POOL; j++) {
+    fillWithBlocks(days, j * daysEach, daysEach, logged.length, block, random);
+  }
+  for (let i = 0; i < days.length; i++) days[i] = logged[days[i]];
+  return { daysEach, days };
 }
 
 function sum(values: readonly number[]): number {

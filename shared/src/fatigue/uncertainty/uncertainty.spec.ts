@@ -205,10 +205,10 @@ describe('drawing', () => {
     expect(Math.abs(below(1.644854) - 0.95)).toBeLessThan(0.0028);
   });
 
-  it('agrees with the slow normal distribution to nine digits, down to 1e-15', () => {
+  it('agrees with the slow normal distribution to eight digits, down to 1e-30', () => {
     for (let x = -12; x <= 12; x += 0.037) {
       const slow = normalCdf(x);
-      expect(Math.abs(fastNormalCdf(x) - slow)).toBeLessThan(1e-9 * Math.max(slow, 1e-15));
+      expect(Math.abs(fastNormalCdf(x) - slow)).toBeLessThan(1e-8 * Math.max(slow, 1e-30));
     }
     expect([fastNormalCdf(-50), fastNormalCdf(50), fastNormalCdf(NaN)]).toEqual([0, 1, NaN]);
   });

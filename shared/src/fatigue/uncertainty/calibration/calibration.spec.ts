@@ -28,7 +28,7 @@ describe('dates of simulated vessels whose truth is known', () => {
     'stays within three points with %s',
     { timeout: 120_000 },
     (stratum) => {
-      const { life } = calibrate({ vessels: 600, firstSeed: 50_001, stratum, draws: 200 });
+      const { life } = calibrate({ vessels: 1000, firstSeed: 1, stratum, draws: 150, withFan: false });
       expect(Math.abs(life.between5And95 - 0.9)).toBeLessThanOrEqual(0.03);
     },
   );
@@ -41,7 +41,8 @@ describe('dates of simulated vessels whose truth is known', () => {
         vessels: 300,
         firstSeed: 1,
         stratum: 'mixed',
-        draws: 200,
+        draws: 150,
+        withFan: false,
         misfit: { loggerOffAboveKn: 22, gainBias: -0.15, seasonCov: 0.5, curveOffBySd: 2 },
       });
       expect(life.bias).toBeLessThan(-10 * life.biasError);
