@@ -5,13 +5,12 @@ import type { FirmInput } from '@stayledger/shared/rerig-schedule/firm-input';
 import type { FirmPlan } from '@stayledger/shared/rerig-schedule/firm-plan';
 import type { FirmVesselAnswer } from '@stayledger/shared/rerig-schedule/firm-vessel';
 import { planFirm } from '@stayledger/shared/rerig-schedule/plan-firm';
-import Piscina from 'piscina';
+import Piscina, { workerData } from 'piscina';
 import { loadSolver } from './load-solver.js';
 import type { PlanningQuestion } from './planning-question.js';
 
-const NICE = 15;
-
-setPriority(0, NICE);
+// Niceness, see PlanningThreads; going back to 0 is not everyone's to do.
+if ((workerData as number) > 0) setPriority(0, workerData as number);
 
 export interface FirmTask {
   firm: FirmInput;
@@ -45,6 +44,7 @@ export default async function plan({
     filename: join(__dirname, `plan.worker${extname(__filename)}`),
     minThreads: threads,
     maxThreads: threads,
+    workerData: workerData as number,
   });
   try {
     return await planFirm(firm, {

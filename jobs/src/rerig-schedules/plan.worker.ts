@@ -4,13 +4,12 @@ import { explainPlan } from '@stayledger/shared/rerig-schedule/explain-plan';
 import { firmVessel } from '@stayledger/shared/rerig-schedule/firm-vessel';
 import { planAlternatives } from '@stayledger/shared/rerig-schedule/plan-alternatives';
 import { planVessel } from '@stayledger/shared/rerig-schedule/plan-vessel';
+import { workerData } from 'piscina';
 import { loadSolver } from './load-solver.js';
 import type { PlanningAnswers, PlanningQuestion } from './planning-question.js';
 
-/** On Linux this lowers the priority of the thread alone: requests are answered while plans are made. */
-const NICE = 15;
-
-setPriority(0, NICE);
+// Niceness, see PlanningThreads; going back to 0 is not everyone's to do.
+if ((workerData as number) > 0) setPriority(0, workerData as number);
 
 /** Answers one question about one vessel, in a thread of its own. */
 export default async function answer(

@@ -9,6 +9,8 @@ import type { PlanningAnswers, PlanningQuestion } from './planning-question.js';
 /** Threads are plain Node and read what was built, also when the rest runs from its sources (the tests). */
 const BUILT_FOLDER = join(__dirname, '../../dist/rerig-schedules');
 const IDLE_MS = 30_000;
+/** On Linux the priority of a thread alone can be lowered: requests are answered while plans are made. */
+const NICE = 15;
 
 /** Where the planning runs: in threads, so that the event loop of the process stays free for people. */
 export class PlanningThreads {
@@ -18,11 +20,13 @@ export class PlanningThreads {
 
   /**
    * @param threads at most so many at a time
-   * @param folder of the thread files, with their ending; the built ones unless given
+   * @param options.folder of the thread files, with their ending; the built ones unless given
+   * @param options.niceness of the threads, from 0 (as this one) to 19
    */
-  constructor(threads: number, { folder, ending } = { folder: BUILT_FOLDER, ending: '.js' }) {
+  constructor(threads: number, options: { folder?: string; ending?: string; niceness?: number } = {}) {
+    const { folder = BUILT_FOLDER, ending = '.js', niceness = NICE } = options;
     this.#threads = threads;
-    const common = { minThreads: 0, idleTimeout: IDLE_MS };
+    const common = { minThreads: 0, idleTimeout: IDLE_MS, workerData: niceness };
     this.#vessels = new Piscina({
       ...common,
       filename: join(folder, `plan.worker${ending}`),

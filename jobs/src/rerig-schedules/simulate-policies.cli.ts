@@ -20,7 +20,7 @@ async function main(): Promise<void> {
     },
   });
   const vesselCount = Number(values.vessels);
-  const threads = new PlanningThreads(Number(values.threads));
+  const threads = new PlanningThreads(Number(values.threads), { niceness: 0 });
   try {
     const rows = await Promise.all(
       POLICIES.map(async (policy) => {

@@ -46,8 +46,11 @@ const VESSEL_LIMIT_S = 10;
 const RELAXED_SHARE = 0.4;
 const WHOLE_SHARE = 0.5;
 const PICKING_SHARE = 0.25;
+const LEAST_PICKING_S = 5;
 /** Times to look for more plans where those picked do not fit. */
-const PICK_RETRIES = 4;
+const PICK_ATTEMPTS = 8;
+/** Parts past their dates are worse than a planning that takes longer: so many times the whole time may go there. */
+const OVERTIME = 1.5;
 /** Rounds of whole plans; each adds one plan per vessel to pick from. */
 const WHOLE_ROUNDS = 8;
 /** How far each of them moves from the prices of the best bound so far toward the master's. */
@@ -202,21 +205,29 @@ class FirmRun {
   /** One option per vessel within the yard's room; null where that takes running later than must be. */
   async pickAndFit(lateMode: boolean): Promise<VesselOption[] | null> {
     let picked = this.#pick();
-    for (let retry = 0; retry < PICK_RETRIES && !lateMode; retry++) {
+    let raised = this.#prices;
+    for (let attempt = 1; !(await this.#fitAll(picked, lateMode)); attempt++) {
+      const isOver = this.settings.elapsedS() >= OVERTIME * this.settings.timeLimitS;
+      if (lateMode) break;
+      if (attempt > PICK_ATTEMPTS || isOver) return null;
+      // Where plans still pass a limit, its price goes up, vessels that use it are asked for plans that keep out of it,
+      // and the pick is made anew among more plans.
       const left = this.#leftBy(picked);
-      if (left.every((room) => room > -SAME) || this.settings.elapsedS() >= this.#until(WHOLE_SHARE)) break;
-      // Where the picked plans pass a limit, ask around for plans that keep out of that window, and pick again.
-      const raised = this.#prices.map((price, at) =>
+      raised = raised.map((price, at) =>
         left[at] < -SAME
-          ? 2 * price + (this.#beyondMinor * (retry + 1)) / (1000 * this.#limits[at].limit + 1)
+          ? 2 * price + (attempt * this.#beyondMinor) / (1000 * this.#limits[at].limit + 1)
           : price,
       );
-      const answers = await this.#askAll(raised, false);
-      this.#advance(this.#boundAt(raised, answers));
-      answers.forEach(({ option }, vessel) => this.#keep(vessel, option));
+      const prices = pricesPerWindow(this.#limits, raised);
+      await Promise.all(
+        picked.map(async (option, vessel) => {
+          if (!this.#limits.some((limit, at) => left[at] < -SAME && useOf(option, limit) > 0)) return;
+          const answer = await this.#ask(vessel, { prices, lateAllowed: false });
+          if (answer !== null) this.#keep(vessel, answer.option);
+        }),
+      );
       picked = this.#pick();
     }
-    if (!(await this.#fitAll(picked, lateMode)) && !lateMode) return null;
     await this.#improve(picked, lateMode);
     return picked;
   }
@@ -224,7 +235,7 @@ class FirmRun {
   #pick(): VesselOption[] {
     const columns = this.#columns();
     const solved = this.settings.solver.solve(this.#master(true).program, {
-      timeLimitS: Math.max(1, this.#until(PICKING_SHARE) - this.settings.elapsedS()),
+      timeLimitS: Math.max(LEAST_PICKING_S, this.#until(PICKING_SHARE) - this.settings.elapsedS()),
       relativeGap: VESSEL_GAP,
     });
     const picked = this.#options.map(([first]) => first);
