@@ -1,5 +1,6 @@
 import { dayAfterYears, yearsBetween } from '../life/day-after-years.js';
 import { HORIZON_YEARS } from '../life/rule-date.js';
+import { quantileOfSorted } from '../statistics/quantile-of-sorted.js';
 import { damageAt } from './damage-at.js';
 import { type DamageDoubt, type DamagePaths, damagePaths } from './damage-paths.js';
 import type { LifeDraws } from './life-draws.js';
@@ -67,11 +68,11 @@ export function forecastFan(
     values.sort();
     return {
       on,
-      p05: quantile(values, 0.05),
-      p25: quantile(values, 0.25),
-      median: quantile(values, 0.5),
-      p75: quantile(values, 0.75),
-      p95: quantile(values, 0.95),
+      p05: quantileOfSorted(values, 0.05),
+      p25: quantileOfSorted(values, 0.25),
+      median: quantileOfSorted(values, 0.5),
+      p75: quantileOfSorted(values, 0.75),
+      p95: quantileOfSorted(values, 0.95),
     };
   });
   for (let i = 0; i < values.length; i++) {
@@ -79,9 +80,9 @@ export function forecastFan(
   }
   values.sort();
   const remainingYears = {
-    p05: quantile(values, 0.05),
-    median: quantile(values, 0.5),
-    p95: quantile(values, 0.95),
+    p05: quantileOfSorted(values, 0.05),
+    median: quantileOfSorted(values, 0.5),
+    p95: quantileOfSorted(values, 0.95),
   };
   return {
     rows,
@@ -106,13 +107,4 @@ function worstAllowance(
     worst = Math.max(worst, damage * detail.designOverMean * detail.designFatigueFactor);
   }
   return worst;
-}
-
-/** Value below which a share of sorted numbers lies: between neighbours in a straight line, infinities kept whole. */
-function quantile(sorted: Float64Array, share: number): number {
-  const at = share * (sorted.length - 1);
-  const below = Math.floor(at);
-  const low = sorted[below];
-  const high = sorted[Math.min(below + 1, sorted.length - 1)];
-  return at === below || low === high ? low : low + (high - low) * (at - below);
 }
