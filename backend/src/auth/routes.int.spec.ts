@@ -108,7 +108,16 @@ async function makeWorld(): Promise<World> {
   });
   return {
     vessel,
-    ids: { vesselId: vessel.id, positionId: free.id, partId: part.body.id, loadLogId, jobId, curveId: '' },
+    ids: {
+      vesselId: vessel.id,
+      positionId: free.id,
+      partId: part.body.id,
+      loadLogId,
+      jobId,
+      // Of the product, the same in every world.
+      curveId: 'en-1993-1-11-150',
+      constructionId: 'strand-1x19-316',
+    },
   };
 }
 

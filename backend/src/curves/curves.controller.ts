@@ -1,14 +1,21 @@
-import { Controller, Get, Param, Query } from '@nestjs/common';
+import { Body, Controller, Get, Param, Post, Query } from '@nestjs/common';
 import { ApiTags } from '@nestjs/swagger';
-import { curveListSchema, curveSchema } from '@stayledger/shared/contracts/curves';
+import {
+  addCurveSchema,
+  curveListSchema,
+  listedCurveSchema,
+  reviseCurveSchema,
+} from '@stayledger/shared/contracts/curves';
 import { createZodDto, ZodResponse } from 'nestjs-zod';
 import { z } from 'zod';
 import { RequirePermission } from '../auth/access.decorators.js';
 import { Me, type Principal } from '../auth/principal.js';
 import { CurvesService } from './curves.service.js';
 
-class CurveReply extends createZodDto(curveSchema) {}
+class CurveReply extends createZodDto(listedCurveSchema) {}
 class CurveListReply extends createZodDto(curveListSchema) {}
+class AddCurveBody extends createZodDto(addCurveSchema) {}
+class ReviseCurveBody extends createZodDto(reviseCurveSchema) {}
 class CurveParams extends createZodDto(z.object({ curveId: z.string().max(120) })) {}
 class CurveQuery extends createZodDto(
   z.strictObject({ version: z.coerce.number().int().min(1).optional() }),
@@ -29,7 +36,21 @@ export class CurvesController {
   @Get(':curveId')
   @RequirePermission('curves:read')
   @ZodResponse({ type: CurveReply })
-  get(@Me() me: Principal, @Param() { curveId }: CurveParams, @Query() { version }: CurveQuery) {
-    return this.curves.get(me, curveId, version);
+  get(@Param() { curveId }: CurveParams, @Query() { version }: CurveQuery) {
+    return this.curves.get(curveId, version);
+  }
+
+  @Post()
+  @RequirePermission('curves:add')
+  @ZodResponse({ type: CurveReply, status: 201 })
+  add(@Me() me: Principal, @Body() body: AddCurveBody) {
+    return this.curves.add(me, body);
+  }
+
+  @Post(':curveId/versions')
+  @RequirePermission('curves:add')
+  @ZodResponse({ type: CurveReply, status: 201 })
+  revise(@Me() me: Principal, @Param() { curveId }: CurveParams, @Body() body: ReviseCurveBody) {
+    return this.curves.revise(me, curveId, body);
   }
 }

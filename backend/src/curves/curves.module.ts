@@ -1,6 +1,7 @@
 import { Module } from '@nestjs/common';
+import { OwnReferenceModule } from '../own-reference/own-reference.module.js';
 import { CurvesController } from './curves.controller.js';
 import { CurvesService } from './curves.service.js';
 
-@Module({ controllers: [CurvesController], providers: [CurvesService] })
+@Module({ imports: [OwnReferenceModule], controllers: [CurvesController], providers: [CurvesService] })
 export class CurvesModule {}

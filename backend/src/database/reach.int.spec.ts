@@ -171,13 +171,34 @@ describe('the application role', () => {
     await expect(em.execute(`truncate ${table}`)).rejects.toThrow(/permission denied/);
   });
 
-  it.each(['curve', 'construction'])('may not write reference data (%s)', async (table) => {
-    const em = orm.em.fork();
-    await expect(em.execute(`update ${table} set name = 'x'`)).rejects.toThrow(/permission denied/);
-    await expect(em.execute(`insert into ${table} select * from ${table}`)).rejects.toThrow(
-      /permission denied/,
-    );
-  });
+  it.each(['curve', 'construction'])(
+    'changes no reference data and adds only a firm its own (%s)',
+    async (table) => {
+      await make.reference(table as 'curve' | 'construction', `${table}-of-the-product`, {});
+      const em = orm.em.fork();
+      await expect(em.execute(`update ${table} set name = 'x'`)).rejects.toThrow(/permission denied/);
+      await expect(em.execute(`delete from ${table}`)).rejects.toThrow(/permission denied/);
+      const add = (id: string, firmId: string | null) =>
+        inReach(orm.em.fork(), { parties: [partyOf(mine)] }, (inner) =>
+          inner.execute(
+            `insert into ${table} (id, version, firm_id, name, data, data_hash, created_at)
+            values (?, 1, ?, 'x', '{}', 'x', now())`,
+            [`${table}-${id}`, firmId],
+          ),
+        );
+      await expect(add('as-product', null)).rejects.toThrow(/row-level security/);
+      await expect(add('as-others', theirs.firmId)).rejects.toThrow(/row-level security/);
+      await add('as-own', mine.firmId);
+      const seenBy = async (vessel: TestVessel) =>
+        inReach(orm.em.fork(), { parties: [partyOf(vessel)] }, (inner) =>
+          inner.execute<{ id: string }[]>(`select id from ${table} where name in ('x', ?) order by id`, [
+            `${table}-of-the-product`,
+          ]),
+        );
+      expect(await seenBy(mine)).toEqual([{ id: `${table}-as-own` }, { id: `${table}-of-the-product` }]);
+      expect(await seenBy(theirs)).toEqual([{ id: `${table}-of-the-product` }]);
+    },
+  );
 
   it('deletes no vessel, part, log or person', async () => {
     for (const table of [

@@ -1,9 +1,14 @@
 import { readFileSync } from 'node:fs';
-import { replacementRulesFileSchema, threadsFileSchema } from '@stayledger/shared/contracts/constructions';
+import {
+  materialsFileSchema,
+  replacementRulesFileSchema,
+  threadsFileSchema,
+} from '@stayledger/shared/contracts/constructions';
 import type { ReplacementRule } from '@stayledger/shared/fatigue/life/replacement-rule';
 import type { ThreadSize } from '@stayledger/shared/rig/part-detail';
 
 let rules: Map<string, ReplacementRule> | undefined;
+let materials: Set<string> | undefined;
 let threads: Map<string, ThreadSize> | undefined;
 
 /** A calendar rule of the trade by the key a construction names; undefined when the table has none. */
@@ -14,6 +19,16 @@ export function replacementRule(id: string): ReplacementRule | undefined {
       .rules.map((rule) => [rule.id, rule]),
   );
   return rules.get(id);
+}
+
+/** Whether the table of materials knows the key. */
+export function isMaterial(id: string): boolean {
+  materials ??= new Set(
+    materialsFileSchema
+      .parse(readJson(require.resolve('@stayledger/reference-data/materials.json')))
+      .materials.map((material) => material.id),
+  );
+  return materials.has(id);
 }
 
 /** A thread by its designation ("M12", "1/2-20 UNF"); undefined when the table does not know it. */

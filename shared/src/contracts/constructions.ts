@@ -1,6 +1,7 @@
 import { z } from 'zod';
-import { provenanceSchema } from './curves.js';
+import { provenanceSchema, referenceFirmSchema } from './curves.js';
 import { TERMINALS } from './parts.js';
+import { idSchema } from './values.js';
 
 const keySchema = z.string().regex(/^[a-z0-9]+(-[a-z0-9]+)*$/, 'Use lower-case words joined by hyphens.');
 const withSource = {
@@ -35,8 +36,41 @@ export const constructionSchema = z.object({
   ...withSource,
 });
 export type ConstructionDto = z.infer<typeof constructionSchema>;
-export const constructionListSchema = z.object({ items: z.array(constructionSchema) });
+export const listedConstructionSchema = z.object({ ...constructionSchema.shape, firm: referenceFirmSchema });
+export type ListedConstructionDto = z.infer<typeof listedConstructionSchema>;
+export const constructionListSchema = z.object({ items: z.array(listedConstructionSchema) });
 export type ConstructionListDto = z.infer<typeof constructionListSchema>;
+
+/** Wire, rod or rope a firm adds for itself: a maker's table or a certificate. Stiffness follows from area and modulus. */
+export const addConstructionSchema = z.strictObject({
+  name: z.string().trim().min(1, 'Give it a name.').max(120),
+  kind: constructionSchema.shape.kind,
+  materialId: keySchema,
+  youngGpa: z.number().min(1, 'The modulus is 1 GPa or more.').max(400, 'The modulus is 400 GPa or less.'),
+  replacementRuleId: keySchema.nullable().default(null),
+  sizes: z
+    .array(
+      z.strictObject({
+        diameterMm: z.number().positive('The diameter must be above zero.').max(120),
+        metallicAreaMm2: z.number().positive('The area must be above zero.').max(12_000),
+        breakingLoadKn: z.number().positive('The breaking load must be above zero.').max(100_000),
+        massKgPerM: z.number().positive('The mass must be above zero.').max(200),
+      }),
+    )
+    .min(1, 'Give at least one size.')
+    .max(40),
+  source: z.string().trim().min(1, 'Name the source: the table or certificate and its date.').max(400),
+  provenance: provenanceSchema,
+  provenanceNote: z.string().trim().min(1, 'Say how the figures were read or made.').max(800),
+  firmId: idSchema.optional(),
+});
+export type AddConstructionInput = z.input<typeof addConstructionSchema>;
+
+export const reviseConstructionSchema = z.strictObject({
+  ...addConstructionSchema.omit({ firmId: true }).shape,
+  version: z.int().min(1),
+});
+export type ReviseConstructionInput = z.input<typeof reviseConstructionSchema>;
 
 /** reference-data/constructions.json */
 export const constructionsFileSchema = z.strictObject({

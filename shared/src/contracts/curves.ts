@@ -1,4 +1,5 @@
 import { z } from 'zod';
+import { idSchema } from './values.js';
 
 export const provenanceSchema = z.enum([
   'published',
@@ -72,5 +73,49 @@ export type CurveDto = z.infer<typeof curveSchema>;
 /** reference-data/curves.json */
 export const curvesFileSchema = z.strictObject({ dataVersion: z.int().min(1), curves: z.array(curveSchema) });
 
-export const curveListSchema = z.object({ items: z.array(curveSchema) });
+/** Whose a row of the reference data is: the firm that added it, or null for what comes with the product. */
+export const referenceFirmSchema = z.object({ id: idSchema, name: z.string() }).nullable();
+
+export const listedCurveSchema = z.object({ ...curveSchema.shape, firm: referenceFirmSchema });
+export type ListedCurveDto = z.infer<typeof listedCurveSchema>;
+export const curveListSchema = z.object({ items: z.array(listedCurveSchema) });
 export type CurveListDto = z.infer<typeof curveListSchema>;
+
+const rangeLimitSchema = z.number().positive('The range must be above zero.').max(1e5).nullable();
+
+/** A curve a firm adds for itself. The service gives it its id and version. */
+export const addCurveSchema = z.strictObject({
+  name: z.string().trim().min(1, 'Give the curve a name.').max(120),
+  appliesTo: z.string().trim().min(1, 'Say which part was tested.').max(200),
+  measure: z.enum(CURVE_MEASURES),
+  level: z.enum(['mean', 'mean-minus-k-sd', 'unknown']),
+  k: z.number().min(0).max(5).default(0),
+  sdLog10N: z.number().positive('The scatter must be above zero.').max(2).nullable().default(null),
+  environment: curveSchema.shape.environment,
+  segments: z
+    .array(
+      z.strictObject({
+        above: z.number().min(0),
+        m: z.number().min(1, 'A slope is 1 or more.').max(30, 'A slope is 30 or less.'),
+        log10a: z.number().min(-50).max(100),
+      }),
+    )
+    .min(1)
+    .max(3),
+  validity: z.strictObject({ minRange: rangeLimitSchema, maxRange: rangeLimitSchema }),
+  source: z.string().trim().min(1, 'Name the source: the report, its number and its date.').max(400),
+  provenance: provenanceSchema,
+  provenanceNote: z.string().trim().min(1, 'Say how the figures were read or made.').max(800),
+  analogyNote: z.string().trim().min(1, 'Say how far the tests are from the part it will serve.').max(400),
+  /** Firm the curve belongs to; may be left out when the person belongs to one firm that may add. */
+  firmId: idSchema.optional(),
+});
+export type AddCurveInput = z.input<typeof addCurveSchema>;
+
+/** A correction: the next version beside the ones accounts were computed with. */
+export const reviseCurveSchema = z.strictObject({
+  ...addCurveSchema.omit({ firmId: true }).shape,
+  /** The version it corrects; 409 when there is a newer one. */
+  version: z.int().min(1),
+});
+export type ReviseCurveInput = z.input<typeof reviseCurveSchema>;

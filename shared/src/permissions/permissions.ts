@@ -15,6 +15,7 @@ export const PERMISSIONS = [
   'life:read',
   'usage:state',
   'curves:read',
+  'curves:add',
   'portfolio:read',
   'users:read',
   'firms:read',
@@ -36,6 +37,7 @@ const looksAfterVessels: Permission[] = [
   'life:read',
   'usage:state',
   'curves:read',
+  'curves:add',
   'audit:read',
   'profile:update',
 ];

@@ -1,5 +1,5 @@
 import { constructionListSchema } from '@stayledger/shared/contracts/constructions';
-import { curveListSchema, curveSchema } from '@stayledger/shared/contracts/curves';
+import { curveListSchema, listedCurveSchema } from '@stayledger/shared/contracts/curves';
 import { queryOptions } from '@tanstack/react-query';
 import { apiGet } from '../../lib/api-client';
 
@@ -22,7 +22,8 @@ export const referenceQueries = {
   curve: (curveId: string) =>
     queryOptions({
       queryKey: ['reference', 'curves', curveId] as const,
-      queryFn: ({ signal }) => apiGet(`/curves/${encodeURIComponent(curveId)}`, curveSchema, { signal }),
+      queryFn: ({ signal }) =>
+        apiGet(`/curves/${encodeURIComponent(curveId)}`, listedCurveSchema, { signal }),
       staleTime: KEPT_MS,
     }),
 };

@@ -1,7 +1,7 @@
 import { readFileSync } from 'node:fs';
 import { sessionSchema } from '@stayledger/shared/contracts/auth';
 import { constructionListSchema, constructionsFileSchema } from '@stayledger/shared/contracts/constructions';
-import { curveListSchema, curveSchema, curvesFileSchema } from '@stayledger/shared/contracts/curves';
+import { curveListSchema, curvesFileSchema, listedCurveSchema } from '@stayledger/shared/contracts/curves';
 import { screen, within } from '@testing-library/react';
 import { describe, expect, it } from 'vitest';
 import { fakeApi, reply, type FakeRequest } from '../../testing/fake-api';
@@ -17,13 +17,15 @@ const { constructions } = constructionsFileSchema.parse(data('constructions.json
 function reference() {
   fakeApi({
     'GET /auth/session': reply(sessionSchema, sampleSession('insurer')),
-    'GET /curves': reply(curveListSchema, { items: curves }),
+    'GET /curves': reply(curveListSchema, { items: curves.map((curve) => ({ ...curve, firm: null })) }),
     'GET /curves/:curveId': ({ path }: FakeRequest) => {
       const curve = curves.find(({ id }) => id === path.split('/')[2]);
       if (!curve) throw new Error(`The spec asks for a curve that is not shipped: ${path}`);
-      return reply(curveSchema, curve);
+      return reply(listedCurveSchema, { ...curve, firm: null });
     },
-    'GET /constructions': reply(constructionListSchema, { items: constructions }),
+    'GET /constructions': reply(constructionListSchema, {
+      items: constructions.map((one) => ({ ...one, firm: null })),
+    }),
   });
 }
 

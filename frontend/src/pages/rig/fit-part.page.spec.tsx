@@ -62,7 +62,7 @@ function fitting(position = samplePosition({ part: null })) {
     {
       'GET /auth/session': reply(sessionSchema, sampleSession('rigger')),
       'GET /vessels/:vesselId/rig': reply(rigSchema, { items: [position] }),
-      'GET /constructions': reply(constructionListSchema, { items: [strand, rod] }),
+      'GET /constructions': reply(constructionListSchema, { items: [strand, rod].map((one) => ({ ...one, firm: null })) }),
       'POST /positions/:positionId/parts': refusal(503, 'unavailable', 'Not now.'),
     },
     { 'POST /positions/:positionId/parts': fitPartSchema },
