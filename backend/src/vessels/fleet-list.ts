@@ -18,6 +18,7 @@ interface Row {
   rig_type: FleetRowDto['rigType'];
   home_port: string | null;
   use_kind: FleetRowDto['useKind'];
+  zone: string;
   parts: number;
   overdue: number;
   due: number;
@@ -35,6 +36,8 @@ interface GoverningRow {
   vessel_id: string;
   part_id: string;
   label: string;
+  kind_of_wire: 'strand' | 'rod' | 'fibre';
+  assessment: 'assessed' | 'not-assessed' | 'calendar-only';
   replace_by_on: string;
   rule: 'fatigue' | 'calendar';
   allowance_used: number | null;
@@ -81,7 +84,7 @@ export class FleetList {
     const permitted = permittedVessels(me, 'vessels:read', now);
     const rows: Row[] = await this.em.execute(
       `with v as materialized (
-         select v.id, v.name, v.rig_type, v.home_port, v.use_kind, (?::timestamptz at time zone v.zone)::date as today_on
+         select v.id, v.name, v.rig_type, v.home_port, v.use_kind, v.zone, (?::timestamptz at time zone v.zone)::date as today_on
            from vessel v
           where v.archived_at is null and ${permitted.sql}
             and (?::text is null or v.name ilike ? or v.home_port ilike ?)),
@@ -100,7 +103,7 @@ export class FleetList {
                 coalesce(sum(g.logged_hours) filter (where g.state = 'posted'), 0) as logged_hours,
                 max(g.to_at) filter (where g.state in ('posted', 'counted')) as last_log_at
            from v join load_log g on g.vessel_id = v.id group by g.vessel_id)
-       select v.id, v.name, v.rig_type, v.home_port, v.use_kind,
+       select v.id, v.name, v.rig_type, v.home_port, v.use_kind, v.zone,
               coalesce(s.parts, 0) as parts, coalesce(s.overdue, 0) as overdue, coalesce(s.due, 0) as due,
               coalesce(s.assessed, 0) as assessed, coalesce(s.not_assessed, 0) as not_assessed,
               coalesce(s.calendar_only, 0) as calendar_only, coalesce(l.logs_waiting, 0) as logs_waiting,
@@ -136,12 +139,14 @@ export class FleetList {
   private async governingOf(vesselIds: readonly string[]): Promise<Map<string, GoverningRow>> {
     if (vesselIds.length === 0) return new Map();
     const rows: GoverningRow[] = await this.em.execute(
-      `select distinct on (s.vessel_id) s.vessel_id, p.id as part_id, q.label, s.replace_by_on::text as replace_by_on,
+      `select distinct on (s.vessel_id) s.vessel_id, p.id as part_id, q.label, c.data ->> 'kindOfWire' as kind_of_wire,
+              s.assessment, s.replace_by_on::text as replace_by_on,
               s.governing_rule as rule, s.allowance_used, ${DUE_STATE} as due
          from (select id, (?::timestamptz at time zone zone)::date as today_on from vessel where id = any (array[?]::uuid[])) v
          join part_standing s on s.vessel_id = v.id
          join fitted_part p on p.id = s.fitted_part_id and p.removed_on is null
          join position q on q.id = p.position_id
+         join construction c on c.id = p.construction_id and c.version = p.construction_version
         where s.replace_by_on is not null and s.governing_rule is not null
         order by s.vessel_id, s.replace_by_on, q.sort_order, q.label`,
       [this.clock.now(), vesselIds],
@@ -163,9 +168,12 @@ function toFleetRow(row: Row, governing: GoverningRow | null): FleetRowDto {
     rigType: row.rig_type,
     homePort: row.home_port,
     useKind: row.use_kind,
+    zone: row.zone,
     governing: governing && {
       partId: governing.part_id,
       positionLabel: governing.label,
+      kindOfWire: governing.kind_of_wire,
+      assessment: governing.assessment,
       replaceByOn: governing.replace_by_on,
       rule: governing.rule,
       allowanceUsed: governing.allowance_used,

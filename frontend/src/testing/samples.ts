@@ -70,9 +70,12 @@ export function sampleFleetRow(overrides: Partial<FleetRowDto> = {}): FleetRowDt
     rigType: 'cutter',
     homePort: 'Skarvik',
     useKind: 'charter',
+    zone: 'Europe/Oslo',
     governing: {
       partId: sampleId(30),
       positionLabel: 'Cap shroud, port',
+      kindOfWire: 'strand',
+      assessment: 'assessed',
       replaceByOn: '2029-04-02',
       rule: 'fatigue',
       allowanceUsed: 0.67,

@@ -1,5 +1,6 @@
 import { z } from 'zod';
 import { pageOf, pageQuerySchema } from './pagination.js';
+import { ASSESSMENTS } from './rig.js';
 import { daySchema, idSchema, instantSchema, versionSchema, zoneSchema } from './values.js';
 
 export const RIG_TYPES = [
@@ -62,10 +63,14 @@ export const fleetRowSchema = z.object({
   rigType: z.enum(RIG_TYPES),
   homePort: z.string().nullable(),
   useKind: z.enum(USE_KINDS),
+  /** Zone of the vessel: her days are read in it. */
+  zone: z.string(),
   governing: z
     .object({
       partId: idSchema,
       positionLabel: z.string(),
+      kindOfWire: z.enum(['strand', 'rod', 'fibre']),
+      assessment: z.enum(ASSESSMENTS),
       replaceByOn: daySchema,
       rule: z.enum(['fatigue', 'calendar']),
       allowanceUsed: z.number().nullable(),

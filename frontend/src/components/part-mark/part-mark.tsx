@@ -1,12 +1,11 @@
-import type { PartStandingDto } from '@stayledger/shared/contracts/rig';
 import { useId } from 'react';
 import { useFormat } from '../../lib/formatting/use-format';
 import { eighthsUsed, partMarkGeometry, type MarkRim, type WireKind } from './part-mark-geometry';
 import styles from './part-mark.module.css';
-import { standingText, type PartCondition } from './standing-words';
+import { standingText, type MarkedStanding, type PartCondition } from './standing-words';
 
 interface PartMarkProps extends PartCondition {
-  standing: PartStandingDto;
+  standing: MarkedStanding;
   kindOfWire: WireKind;
   /** 18 in tables, 24 in lists, 48 on cards, 160 on the part page. */
   size?: 18 | 24 | 48 | 160;

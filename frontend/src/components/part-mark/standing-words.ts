@@ -1,6 +1,9 @@
 import type { PartStandingDto } from '@stayledger/shared/contracts/rig';
 import type { Formatter } from '../../lib/formatting/format';
 
+/** As much of a standing as the mark and its word say. */
+export type MarkedStanding = Pick<PartStandingDto, 'assessment' | 'allowanceUsed' | 'due'>;
+
 /** What is known about a part besides its standing; each has its own mark and word. */
 export interface PartCondition {
   /** The date hangs on an unconfirmed estimate. */
@@ -12,7 +15,7 @@ export interface PartCondition {
 }
 
 /** The one word that stands beside the mark. */
-export function standingWord(standing: PartStandingDto, condition: PartCondition = {}): string {
+export function standingWord(standing: MarkedStanding, condition: PartCondition = {}): string {
   if (condition.failed) return 'Failed inspection';
   if (condition.suspended) return 'Suspended';
   if (standing.due === 'overdue') return 'Overdue';
@@ -24,7 +27,7 @@ export function standingWord(standing: PartStandingDto, condition: PartCondition
 }
 
 /** Text alternative of the mark: the same things the drawing says. */
-export function standingText(standing: PartStandingDto, condition: PartCondition, format: Formatter): string {
+export function standingText(standing: MarkedStanding, condition: PartCondition, format: Formatter): string {
   const word = standingWord(standing, condition);
   const said = [word];
   if (standing.assessment === 'not-assessed' && word !== 'Not assessed') said.push('fatigue not assessed');

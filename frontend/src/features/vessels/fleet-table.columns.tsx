@@ -2,16 +2,15 @@ import type { FleetRowDto } from '@stayledger/shared/contracts/vessels';
 import { Link } from 'react-router-dom';
 import { paths } from '../../app/paths';
 import { DueWord } from '../../components/part-mark/due-word';
+import { PartMark } from '../../components/part-mark/part-mark';
 import type { DataTableColumn } from '../../components/tables/data-table';
+import { clock } from '../../lib/clock';
 import type { Formatter } from '../../lib/formatting/format';
+import styles from './fleet.module.css';
 import { countWords, dueWords, RIG_TYPE_WORDS, RULE_WORDS, USE_KIND_WORDS } from './vessel-words';
 
 /** One row a vessel: what governs it, how much of the picture is missing, and what was recorded. */
-export function fleetColumns(
-  format: Formatter,
-  todayOn: string,
-  zone: string,
-): DataTableColumn<FleetRowDto>[] {
+export function fleetColumns(format: Formatter): DataTableColumn<FleetRowDto>[] {
   return [
     {
       key: 'name',
@@ -34,13 +33,18 @@ export function fleetColumns(
       help: 'replace by',
       render: (row) =>
         row.governing ? (
-          <>
-            <Link to={paths.part.to(row.governing.partId)}>{row.governing.positionLabel}</Link>
-            <div>
-              <DueWord due={row.governing.due}>{dueWords(row.governing, format, todayOn)}</DueWord>
-              <span className="soft">, {RULE_WORDS[row.governing.rule]}</span>
-            </div>
-          </>
+          <span className={styles.governing}>
+            <PartMark standing={row.governing} kindOfWire={row.governing.kindOfWire} />
+            <span>
+              <Link to={paths.part.to(row.governing.partId)}>{row.governing.positionLabel}</Link>
+              <span className={styles.rule}>
+                <DueWord due={row.governing.due}>
+                  {dueWords(row.governing, format, clock.todayOn(row.zone))}
+                </DueWord>
+                <span className="soft">, {RULE_WORDS[row.governing.rule]}</span>
+              </span>
+            </span>
+          </span>
         ) : (
           <span className="soft">No date yet</span>
         ),
@@ -68,7 +72,7 @@ export function fleetColumns(
         <>
           {format.hours(row.loggedHours)}
           <div className="soft">
-            {row.lastLogAt ? `to ${format.instant(row.lastLogAt, zone).split(',')[0]}` : 'no log yet'}
+            {row.lastLogAt ? `to ${format.instant(row.lastLogAt, row.zone).split(',')[0]}` : 'no log yet'}
           </div>
         </>
       ),

@@ -5,6 +5,8 @@ import { paths } from '../../app/paths';
 import { ErrorState } from '../../components/feedback/error-state';
 import { LoadingState } from '../../components/feedback/loading-state';
 import { DueWord } from '../../components/part-mark/due-word';
+import { PartMark } from '../../components/part-mark/part-mark';
+import { clock } from '../../lib/clock';
 import type { Formatter } from '../../lib/formatting/format';
 import { vesselQueries } from './vessels.queries';
 import { dueWords, RULE_WORDS } from './vessel-words';
@@ -13,7 +15,7 @@ import styles from './fleet.module.css';
 const SHOWN = 5;
 
 /** What the day asks for: parts over or near their date, and logs that wait for a person. */
-export function WorkDue({ format, todayOn }: { format: Formatter; todayOn: string }) {
+export function WorkDue({ format }: { format: Formatter }) {
   const [overdue, due, waiting] = useQueries({
     queries: [vesselQueries.work('overdue'), vesselQueries.work('due'), vesselQueries.work('waiting')],
   });
@@ -40,11 +42,16 @@ export function WorkDue({ format, todayOn }: { format: Formatter; todayOn: strin
         {dates.slice(0, SHOWN).map((row) =>
           row.governing ? (
             <li key={row.id}>
-              <Link to={paths.part.to(row.governing.partId)}>
-                {row.name}: {row.governing.positionLabel}
-              </Link>
+              <span className={styles.governing}>
+                <PartMark standing={row.governing} kindOfWire={row.governing.kindOfWire} size={24} />
+                <Link to={paths.part.to(row.governing.partId)}>
+                  {row.name}: {row.governing.positionLabel}
+                </Link>
+              </span>
               <span>
-                <DueWord due={row.governing.due}>{dueWords(row.governing, format, todayOn)}</DueWord>
+                <DueWord due={row.governing.due}>
+                  {dueWords(row.governing, format, clock.todayOn(row.zone))}
+                </DueWord>
                 <span className="soft">, {RULE_WORDS[row.governing.rule]}</span>
               </span>
             </li>

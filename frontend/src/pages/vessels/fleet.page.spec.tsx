@@ -16,6 +16,8 @@ const overdue = sampleFleetRow({
   governing: {
     partId: sampleId(31),
     positionLabel: 'Forestay',
+    kindOfWire: 'strand',
+    assessment: 'not-assessed',
     replaceByOn: '2024-05-03',
     rule: 'calendar',
     allowanceUsed: null,

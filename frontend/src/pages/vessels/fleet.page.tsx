@@ -13,7 +13,6 @@ import { fleetColumns } from '../../features/vessels/fleet-table.columns';
 import styles from '../../features/vessels/fleet.module.css';
 import { vesselQueries, type FleetFilter } from '../../features/vessels/vessels.queries';
 import { WorkDue } from '../../features/vessels/work-due';
-import { browserZone, clock } from '../../lib/clock';
 import { useFormat } from '../../lib/formatting/use-format';
 import { useCan } from '../../lib/session';
 
@@ -21,11 +20,9 @@ export function FleetPage() {
   const [search, setSearch] = useSearchParams();
   const format = useFormat();
   const mayRegister = useCan('vessels:register');
-  const zone = browserZone();
-  const todayOn = clock.todayOn(zone);
   const filter = readFleetFilter(search);
   const vessels = useInfiniteQuery(vesselQueries.list(filter));
-  const columns = useMemo(() => fleetColumns(format, todayOn, zone), [format, todayOn, zone]);
+  const columns = useMemo(() => fleetColumns(format), [format]);
   const narrowed = filter.q !== undefined || filter.filter !== 'all';
 
   const change = (next: Partial<FleetFilter>) =>
@@ -45,7 +42,7 @@ export function FleetPage() {
   return (
     <>
       <PageHeading title="Fleet" actions={register} />
-      <WorkDue format={format} todayOn={todayOn} />
+      <WorkDue format={format} />
       <section aria-labelledby="vessels">
         <h2 id="vessels">Vessels</h2>
         <FleetFilters filter={filter} onChange={change} />
