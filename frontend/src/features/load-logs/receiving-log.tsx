@@ -64,8 +64,10 @@ export function ReceivingLog({ log, mayUpload }: { log: LoadLogDto; mayUpload: b
         share={sentBytes / log.sizeBytes}
         detail={`${format.bytes(sentBytes)} of ${format.bytes(log.sizeBytes)}`}
       />
-      {progress?.message !== null && progress !== null && (
-        <Attention role="status">{progress.message}</Attention>
+      {progress !== null && progress.message !== null && (
+        <div className={styles.notice}>
+          <Attention role="status">{progress.message}</Attention>
+        </div>
       )}
       {isRunning && (
         <p>

@@ -59,11 +59,13 @@ function LogInItsState({ log, vessel }: { log: LoadLogDto; vessel: VesselDto }) 
   return (
     <>
       {log.sameFileAs !== null && (
-        <Attention>
-          The same file is here already:{' '}
-          <Link to={paths.loadLog.to(log.sameFileAs.id)}>{log.sameFileAs.fileName}</Link> (
-          {loadLogStateWords(log.sameFileAs.state).word.toLowerCase()}). Its cycles can be posted once only.
-        </Attention>
+        <div className={styles.notice}>
+          <Attention>
+            The same file is here already:{' '}
+            <Link to={paths.loadLog.to(log.sameFileAs.id)}>{log.sameFileAs.fileName}</Link> (
+            {loadLogStateWords(log.sameFileAs.state).word.toLowerCase()}). Its cycles can be posted once only.
+          </Attention>
+        </div>
       )}
       {log.state === 'receiving' && <ReceivingLog log={log} mayUpload={mayUpload} />}
       {(log.state === 'received' || log.state === 'counting') && <CountingLog log={log} />}
