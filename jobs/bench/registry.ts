@@ -29,4 +29,9 @@ export const REGISTRY: { values: string[]; load: () => Promise<BenchRow> }[] = [
     values: ['planFirmS', 'planFirmGap'],
     load: async () => (await import('./rerig-schedule.row.js')).planFirmRow,
   },
+  {
+    values: ['calibration90', 'calibrationBias'],
+    load: async () => (await import('./calibration.row.js')).calibrationRow,
+  },
+  { values: ['compareMs'], load: async () => (await import('./compare.row.js')).compareRow },
 ];
