@@ -1,3 +1,4 @@
+import { stopOnSignals } from '@stayledger/backend/common/process/stop-on-signals';
 import 'reflect-metadata';
 import { EntityManager } from '@mikro-orm/postgresql';
 import { Logger, Module } from '@nestjs/common';
@@ -7,7 +8,6 @@ import { EnvironmentError, readEnv, type Env } from '@stayledger/backend/config/
 import { readDemo } from '@stayledger/backend/database/seed/read-demo';
 import { AnotherProcessError, becomeSoleProcess } from '@stayledger/backend/database/sole-process';
 import { takeBackLeases } from './common/job-leases.js';
-import { stopOnSignals } from './common/stop-on-signals.js';
 import { bringInDemoLogs } from './demo/bring-in-demo-logs.js';
 import { JobsModule } from './jobs.module.js';
 

@@ -1,8 +1,8 @@
+import { stopOnSignals } from '@stayledger/backend/common/process/stop-on-signals';
 import 'reflect-metadata';
 import { Logger } from '@nestjs/common';
 import { NestFactory } from '@nestjs/core';
 import { EnvironmentError, readEnv } from '@stayledger/backend/config/env';
-import { stopOnSignals } from './common/stop-on-signals.js';
 import { JobsModule } from './jobs.module.js';
 
 /** The worker alone. It shares a Redis with the API: without one they could not wake each other. */
