@@ -1,5 +1,8 @@
+import { readdir } from 'node:fs/promises';
+import { join } from 'node:path';
 import type { TestUser, TestVessel } from '../testing/factories.js';
 import { TestApp, type Agent } from '../testing/test-app.js';
+import { LogReceiver } from './log-receiver.js';
 
 jest.setTimeout(60_000);
 
@@ -52,6 +55,18 @@ describe('cancelling an upload', () => {
     const log = (await agent.get(`/api/load-logs/${id}`)).body;
     expect(log).toMatchObject({ state: 'failed', failure: { code: 'upload-cancelled' } });
     expect((await agent.head(`/api/uploads/${id}`).set(TUS)).status).toBe(404);
+  });
+
+  it('is finished by the sweep when the process ended before the bytes were gone', async () => {
+    const id = await receiving(BYTES.subarray(0, 20));
+    const other = await receiving(BYTES.subarray(0, 20));
+    await app.database.admin.query(`update load_log set state = 'failed' where id = $1`, [id]);
+    // Files are dated by the machine's clock, and swept by the clock of the service.
+    app.clock.setTo(new Date(Date.now() + 1000).toISOString());
+    await app.nest.get(LogReceiver).sweep();
+    const left = await readdir(join(app.env.STAYLEDGER_DATA, 'files', vessel.id));
+    expect(left).not.toContain(`${id}.part`);
+    expect(left).toContain(`${other}.part`);
   });
 
   it('keeps a file that has arrived in full', async () => {

@@ -1,6 +1,6 @@
 import { LockMode } from '@mikro-orm/core';
 import { EntityManager } from '@mikro-orm/postgresql';
-import { Inject, Injectable, Logger } from '@nestjs/common';
+import { Inject, Injectable, Logger, type OnApplicationBootstrap } from '@nestjs/common';
 import { Interval } from '@nestjs/schedule';
 import { COUNT_LOAD_LOG } from '@stayledger/shared/queues/load-logs.queue';
 import { AuditService } from '../audit/audit.service.js';
@@ -17,7 +17,7 @@ const SWEEP_EVERY_MS = 60_000;
 
 /** Takes over files whose last byte has arrived, and clears away those that never got so far. */
 @Injectable()
-export class LogReceiver {
+export class LogReceiver implements OnApplicationBootstrap {
   private readonly logger = new Logger(LogReceiver.name);
   private sweeping: Promise<void> | null = null;
   /** Zero at start: whatever a crash left behind is looked at once. */
@@ -30,6 +30,11 @@ export class LogReceiver {
     private readonly clock: Clock,
     @Inject(LOG_STORAGE) private readonly storage: LogStorage,
   ) {}
+
+  /** What a crash interrupted is finished at once, and not only when the first interval has gone by. */
+  onApplicationBootstrap(): void {
+    void this.sweep();
+  }
 
   /**
    * Makes a fully received file durable, judges it by its contents and announces the job that counts it. Does nothing
@@ -121,23 +126,33 @@ export class LogReceiver {
     return this.sweeping;
   }
 
-  /** Finishes what a crash interrupted between the last byte and the row, and gives up what was abandoned. */
+  /** Finishes what a crash interrupted between the last byte and the row, and clears away what nobody goes on with. */
   private async sweepOnce(): Promise<void> {
     const now = this.clock.now().getTime();
-    for (const key of await this.storage.completedSince(this.checkedUntilMs)) {
+    let failures = 0;
+    const each = async (keys: StorageKey[], work: (key: StorageKey) => Promise<void>): Promise<void> => {
+      for (const key of keys) {
+        // One file that cannot be read must not keep the others waiting.
+        await work(key).catch((error: unknown) => {
+          failures += 1;
+          this.logger.warn(`the file of load log ${key.loadLogId}: ${String(error)}`);
+        });
+      }
+    };
+    await each(await this.storage.completedSince(this.checkedUntilMs), async (key) => {
       const log = await this.logOf(key);
       if (log?.state === 'receiving') await this.takeOver(key);
-    }
-    // An hour of overlap for clocks of file systems that are not ours.
-    this.checkedUntilMs = now - 3_600_000;
-    for (const key of await this.storage.halfReceivedBefore(now)) {
+    });
+    await each(await this.storage.halfReceivedBefore(now), async (key) => {
       const log = await this.logOf(key);
       const received = await this.storage.received(key);
       if (log?.state === 'receiving' && received?.bytes === log.sizeBytes) await this.takeOver(key);
-    }
-    for (const key of await this.storage.halfReceivedBefore(now - UPLOAD_EXPIRY_MS)) {
-      await this.giveUp(key);
-    }
+      // Cancelled, and the process ended before the file was gone.
+      else if (log !== null && log.state !== 'receiving') await this.storage.discardHalf(key);
+    });
+    await each(await this.storage.halfReceivedBefore(now - UPLOAD_EXPIRY_MS), (key) => this.giveUp(key));
+    // An hour of overlap for clocks of file systems that are not ours.
+    if (failures === 0) this.checkedUntilMs = now - 3_600_000;
   }
 
   private async giveUp(key: StorageKey): Promise<void> {
@@ -153,7 +168,7 @@ export class LogReceiver {
         updatedAt: this.clock.now(),
       });
     });
-    await this.storage.discard(key);
+    await this.storage.discardHalf(key);
     this.logger.log(`cleared away the half-received file of load log ${key.loadLogId}`);
   }
 

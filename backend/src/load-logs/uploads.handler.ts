@@ -14,7 +14,9 @@ import {
   InvalidRequestError,
   NotFoundError,
   StateConflictError,
+  UnavailableError,
 } from '../common/errors/app-error.js';
+import { databaseIsAway } from '../common/errors/database-away.js';
 import { currentRequestId } from '../common/http/request-context.js';
 import { inReach } from '../database/reach.js';
 import { LOG_STORAGE, type LogStorage, type StorageKey } from '../storage/log-storage.js';
@@ -27,6 +29,7 @@ export const UPLOADS_PATH = '/api/uploads';
 /** Who sends, and which announced log the bytes belong to; the protocol's own request carries neither. */
 interface UploadScope {
   me: Principal;
+  response: Response;
   log: LoadLog | null;
 }
 
@@ -74,7 +77,7 @@ export class UploadsHandler {
       const me = principalOf(request);
       if (!me.permissions.has('load-logs:upload')) throw new ForbiddenError();
       takeCallbackAtEnd(response);
-      this.scopes.run({ me, log: null }, () => {
+      this.scopes.run({ me, response, log: null }, () => {
         server.handle(request, response).catch(next);
       });
     };
@@ -134,8 +137,13 @@ export class UploadsHandler {
   private reply(
     error: Error | { status_code: number; body: string },
   ): { status_code: number; body: string } | undefined {
-    if (error instanceof AppError) return envelope(error.status, error.code, error.message);
     if ('status_code' in error) return undefined;
+    const known = databaseIsAway(error) ? new UnavailableError({ cause: error }) : error;
+    if (known instanceof AppError) {
+      const { response } = this.scope();
+      if (known.retryAfterS !== undefined) response.setHeader('Retry-After', String(known.retryAfterS));
+      return envelope(known.status, known.code, known.message);
+    }
     this.logger.error(error.message, error.stack);
     return envelope(500, 'internal', 'The bytes could not be stored. Go on with the upload in a moment.');
   }

@@ -57,6 +57,24 @@ describe('LocalFolderLogStorage', () => {
     expect(await readdir(join(root, key.vesselId))).toEqual([key.loadLogId]);
   });
 
+  it('completes a file that two complete at the same moment', async () => {
+    await storage.begin(key);
+    await storage.append(key, 0, Readable.from([Buffer.from('abc')]));
+    const both = await Promise.all(Array.from({ length: 8 }, () => storage.complete(key)));
+    // SHA-256 of "abc" as in FIPS 180-2, appendix B.1.
+    const sha256 = 'ba7816bf8f01cfea414140de5dae2223b00361a396177a9cb410ff61f20015ad';
+    expect(both).toEqual(Array.from({ length: 8 }, () => ({ sizeBytes: 3, sha256 })));
+  });
+
+  it('removes what is on its way without touching a complete file', async () => {
+    await storage.begin(key);
+    await storage.append(key, 0, Readable.from([Buffer.from('abc')]));
+    await storage.complete(key);
+    await writeFile(join(root, key.vesselId, `${key.loadLogId}.part`), 'stale');
+    await storage.discardHalf(key);
+    expect(await readdir(join(root, key.vesselId))).toEqual([key.loadLogId]);
+  });
+
   it('lets nothing but ids into a path', async () => {
     for (const loadLogId of ['../x', 'a/b', '', '..', `${key.loadLogId}/../x`, `${key.loadLogId}\u0000`]) {
       await expect(storage.begin({ ...key, loadLogId })).rejects.toThrow('Not an id');

@@ -54,15 +54,12 @@ export class LocalFolderLogStorage implements LogStorage {
   async complete(key: StorageKey): Promise<StoredFile> {
     const finalPath = this.finalPath(key);
     if ((await sizeOf(finalPath)) === null) {
-      const partPath = this.partPath(key);
-      const file = await open(partPath, 'r+');
       try {
-        await file.sync();
-      } finally {
-        await file.close();
+        await makeFinal(this.partPath(key), finalPath);
+      } catch (error) {
+        // Somebody else completed the same file in between: the sweep, or a client that asks again.
+        if (!hasCode(error, 'ENOENT') || (await sizeOf(finalPath)) === null) throw error;
       }
-      await rename(partPath, finalPath);
-      await syncFolder(dirname(finalPath));
     }
     return describe(finalPath);
   }
@@ -78,6 +75,10 @@ export class LocalFolderLogStorage implements LogStorage {
   async discard(key: StorageKey): Promise<void> {
     await rm(this.partPath(key), { force: true });
     await rm(this.finalPath(key), { force: true });
+  }
+
+  async discardHalf(key: StorageKey): Promise<void> {
+    await rm(this.partPath(key), { force: true });
   }
 
   async halfReceivedBefore(instantMs: number): Promise<StorageKey[]> {
@@ -127,6 +128,17 @@ export class LocalFolderLogStorage implements LogStorage {
     }
     return join(this.root, vesselId, loadLogId);
   }
+}
+
+async function makeFinal(partPath: string, finalPath: string): Promise<void> {
+  const file = await open(partPath, 'r+');
+  try {
+    await file.sync();
+  } finally {
+    await file.close();
+  }
+  await rename(partPath, finalPath);
+  await syncFolder(dirname(finalPath));
 }
 
 async function describe(path: string): Promise<StoredFile> {

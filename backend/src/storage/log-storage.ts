@@ -38,6 +38,8 @@ export interface LogStorage {
   /** Path of a complete file on this machine, for a counting thread that reads by itself. */
   localPath(key: StorageKey): Promise<string>;
   discard(key: StorageKey): Promise<void>;
+  /** Removes what is on its way and leaves a complete file alone. */
+  discardHalf(key: StorageKey): Promise<void>;
   /** Files on their way whose last byte came before the given instant. */
   halfReceivedBefore(instantMs: number): Promise<StorageKey[]>;
   /** Files that became complete at the given instant or later, for checks after a crash. */

@@ -1,9 +1,4 @@
-import {
-  ConnectionException,
-  DriverException,
-  OptimisticLockError,
-  UniqueConstraintViolationException,
-} from '@mikro-orm/core';
+import { DriverException, OptimisticLockError, UniqueConstraintViolationException } from '@mikro-orm/core';
 import { Catch, HttpException, Logger, type ArgumentsHost, type ExceptionFilter } from '@nestjs/common';
 import { ThrottlerException } from '@nestjs/throttler';
 import type { ErrorCode, ErrorReply } from '@stayledger/shared/contracts/errors';
@@ -21,6 +16,7 @@ import {
   UnavailableError,
   UnsupportedMediaTypeError,
 } from './app-error.js';
+import { databaseIsAway } from './database-away.js';
 
 /** The only exit for errors: one envelope, an id to find the log line by, and no detail of an accident. */
 @Catch()
@@ -122,25 +118,6 @@ function pathsOf(issue: z.core.$ZodIssue): string[] {
   // An unknown key is reported on the object that holds it; people look for it at the key itself.
   if (issue.code === 'unrecognized_keys') return issue.keys.map((key) => [...issue.path, key].join('.'));
   return [issue.path.join('.')];
-}
-
-/** SQLSTATE classes 08 (connection), 53 (resources), 57P (shutting down), and what the driver says itself. */
-function databaseIsAway(exception: unknown): boolean {
-  if (exception instanceof ConnectionException) return true;
-  if (!(exception instanceof Error)) return false;
-  const { code } = exception as { code?: unknown };
-  if (
-    typeof code === 'string' &&
-    /^(08...|53...|57P0.|ECONNREFUSED|ECONNRESET|EPIPE|ETIMEDOUT)$/.test(code)
-  ) {
-    return true;
-  }
-  return (
-    exception.name === 'KnexTimeoutError' ||
-    /^Connection terminated|timeout exceeded when trying to connect|Timeout acquiring a connection/.test(
-      exception.message,
-    )
-  );
 }
 
 /**
