@@ -78,8 +78,8 @@ export async function planFirm(firm: FirmInput, settings: FirmSettings): Promise
   if (problems.length > 0) throw new RangeError(problems.join(' '));
   const run = new FirmRun(firm, settings);
   await run.begin();
-  await run.findOptions(false);
-  let picked = await run.pickAndFit(false);
+  const isShort = await run.findOptions(false);
+  let picked = isShort ? null : await run.pickAndFit(false);
   if (picked === null) {
     // Not every vessel can be in time: days late are weighed against money, and the bound is found anew.
     await run.findOptions(true);
@@ -143,8 +143,12 @@ class FirmRun {
     this.#advance(this.#boundAt(this.#prices, answers));
   }
 
-  /** Finds prices on the relaxed programs, then whole plans at and around them. */
-  async findOptions(lateMode: boolean): Promise<void> {
+  /**
+   * Finds prices on the relaxed programs, then whole plans at and around them.
+   *
+   * @returns true where the yard is short of room: even split plans cannot all be in time
+   */
+  async findOptions(lateMode: boolean): Promise<boolean> {
     const { settings } = this;
     if (lateMode) {
       // A bound for plans in time says nothing about plans that may be late.
@@ -164,10 +168,12 @@ class FirmRun {
     this.#rounds += relaxed.rounds;
     this.#advance(relaxed.boundMinor);
     this.#prices = relaxed.pricesMinor;
-    // Where only a whole plan here and there did not fit, the plans found in time are the better start.
-    if (lateMode && !this.#isShort) return;
-    this.#isShort = relaxed.isShort;
-    await this.#findWholeOptions(relaxed.pricesMinor, lateMode);
+    // Whole plans in time are of use where there is room for them, and late ones where there is not. Where only a plan here
+    // and there did not fit, those found in time are the better start for plans that may be late.
+    const isFirstAttempt = !lateMode;
+    if (isFirstAttempt) this.#isShort = relaxed.isShort;
+    if (isFirstAttempt !== this.#isShort) await this.#findWholeOptions(relaxed.pricesMinor, lateMode);
+    return this.#isShort;
   }
 
   async #findWholeOptions(pricesMinor: number[], lateMode: boolean): Promise<void> {
