@@ -3,7 +3,8 @@ import { lnSdOfCov } from '../statistics/lognormal.js';
 import { normalSource } from '../statistics/normal-source.js';
 import type { RandomStreams } from '../statistics/random-streams.js';
 import type { RandomSource } from '../statistics/seeded-random.js';
-import { type UseRecord, CARRIED_IN_COV } from './life-record.js';
+import { CARRIED_IN_COV } from '../usage/carried-in.js';
+import type { UseRecord } from './life-record.js';
 
 /** Ways a year can turn out, drawn once and picked from. */
 export const YEARS_IN_POOL = 256;

@@ -82,5 +82,3 @@ export interface PartRecord {
 
 /** Spread of the Miner sum at failure, lognormal with mean 1. Source: JCSS Probabilistic Model Code part 3 (published). */
 export const MINER_COV = 0.3;
-/** Spread of what a part carried before its first log. Engineering estimate without a source. */
-export const CARRIED_IN_COV = 0.5;

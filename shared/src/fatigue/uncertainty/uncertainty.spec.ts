@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest';
-import type { Curve } from '../curves/curve.js';
+import type { Curve, ReferenceCurve } from '../curves/curve.js';
 import { damageOfSpectrum } from '../damage/damage-of-spectrum.js';
 import type { DetailModel } from '../damage/detail-model.js';
 import { ruleDate } from '../life/rule-date.js';
@@ -16,6 +16,7 @@ import { basisCov } from './basis-cov.js';
 import { curveLnSd } from './curve-ln-sd.js';
 import { damageGrid } from './damage-grid.js';
 import { damageOnGrid, GRID_SIZE, lnNode } from './damage-on-grid.js';
+import { detailRecord } from './detail-record.js';
 import { failureProbabilityAt } from './failure-probability-at.js';
 import { failureProbabilityByDate } from './failure-probability-by-date.js';
 import { fatigueReplaceBy } from './fatigue-replace-by.js';
@@ -24,6 +25,7 @@ import { gainDoubt } from './gain-doubt.js';
 import { lifeDraws } from './life-draws.js';
 import { MINER_COV, type PartRecord, type UseRecord } from './life-record.js';
 import { type Doubt, partLife } from './part-life.js';
+import { notCoveredHours } from './not-covered-hours.js';
 import { provisionalRange } from './provisional-range.js';
 import { reliabilityDate } from './reliability-date.js';
 import { seasonCov } from './season-cov.js';
@@ -340,6 +342,53 @@ describe('the life of a part', () => {
     expect((paths[0].cumulative[1] - paths[0].cumulative[0]) / perYear).toBeCloseTo(1, 9);
   });
 
+  it('says which unlogged hours no record answers for', () => {
+    const made = vessel(EVEN);
+    const groups = [4, 5, null].map((band) => ({ state: 'sailing' as const, band }));
+    const use: UseRecord = {
+      ...made.use,
+      groups: [...groups, { state: 'mast-out', band: null }],
+      days: made.use.days.map(() => ({
+        season: 0,
+        loggedHours: [5, 0, 0, 0],
+        unloggedHours: [0, 0.5, 1, 2],
+      })),
+      otherUnloggedHours: [0, 3, 0, 0],
+    };
+    // Fifty days of half an hour and three more in a band above all records; unknown wind is answered by all of sailing.
+    expect(notCoveredHours(use)).toEqual([{ state: 'sailing', band: 5, hours: 28 }]);
+  });
+
+  it('gives each calibration period its own gain', () => {
+    const made = vessel(EVEN, { gainCov: 0.1 });
+    const use: UseRecord = {
+      ...made.use,
+      calibrations: [
+        { key: 'first', gainCov: 0.1 },
+        { key: 'second', gainCov: 0.1 },
+      ],
+    };
+    const [detail] = made.part.details;
+    const spreadWith = (calibrationOfDay: number[]): number => {
+      const part = { ...made.part, details: [{ ...detail, calibrationOfDay }] };
+      const { paths } = partLife(
+        lifeDraws(use, randomStreams(1), { draws: 4000 }),
+        part,
+        new Set<Doubt>(['gain']),
+      );
+      const logs = Array.from({ length: 4000 }, (_, i) =>
+        Math.log(paths[0].cumulative[i * (paths[0].years + 1)]),
+      );
+      const mean = logs.reduce((sum, value) => sum + value, 0) / logs.length;
+      return Math.sqrt(logs.reduce((sum, value) => sum + (value - mean) ** 2, 0) / logs.length);
+    };
+    // One period: 4 * 0.09975 = 0.399. Two independent halves: near 0.399 / sqrt(2) = 0.282, a little more for large gains.
+    expect(spreadWith(EVEN.map(() => 0))).toBeCloseTo(0.399, 1);
+    const two = spreadWith(EVEN.map((_, day) => (day < 25 ? 0 : 1)));
+    expect(two).toBeGreaterThan(0.26);
+    expect(two).toBeLessThan(0.32);
+  });
+
   it('refuses a record that does not fit together', () => {
     const made = vessel(EVEN);
     const [detail] = made.part.details;
@@ -349,6 +398,61 @@ describe('the life of a part', () => {
     expect(() => partLife(draws, broken({ calibrationOfDay: EVEN.map(() => 4) }))).toThrow(RangeError);
     const noLoads = { ...made.use, days: [{ season: 0, loggedHours: [0], unloggedHours: [5] }] };
     expect(() => lifeDraws(noLoads, randomStreams(1))).toThrow(RangeError);
+  });
+});
+
+describe('the record of a detail', () => {
+  const curve = (level: ReferenceCurve['level'], sdLog10N: number | null): ReferenceCurve => ({
+    id: 'invented',
+    version: 1,
+    name: 'Invented',
+    appliesTo: 'nothing',
+    measure: 'stress-metallic',
+    level,
+    k: 2,
+    sdLog10N,
+    environment: 'air',
+    segments: ONE_SLOPE.segments,
+    meanLoad: { kind: 'none', reason: 'measured under tension' },
+    thickness: null,
+    threadSize: null,
+    cutOffRange: null,
+    validity: { minRange: null, maxRange: null, note: '' },
+    source: 'made for this test',
+    provenance: 'derived',
+    provenanceNote: '',
+    analogyNote: '',
+    selectable: false,
+  });
+  const recordOf = (own: ReferenceCurve, modelSdLog10N = 0) =>
+    detailRecord({
+      key: 'wire',
+      name: 'free length',
+      model: { ...detailOn(ONE_SLOPE), curve: own },
+      modelSdLog10N,
+      designFatigueFactor: 3,
+      spectrum: spectrumOfDays(UNEVEN),
+      dayNumbers: UNEVEN.map((_, day) => day),
+      gainCov: 0.1,
+      basisCov: 0.15,
+    });
+  const design = damageOfSpectrum(spectrumOfDays(UNEVEN), detailOn(ONE_SLOPE)).damage;
+
+  it('stands on the mean curve, and finds the design damage again (two deviations of 0.20: 2.511886)', () => {
+    const record = recordOf(curve('mean-minus-k-sd', 0.2));
+    expect(record.designOverMean).toBeCloseTo(2.511886, 6);
+    expect(record.grid.total[4] * record.designOverMean).toBeCloseTo(design, 12);
+  });
+
+  it('is never shifted by doubt about its fit, nor where its level is not known', () => {
+    const borrowed = recordOf(curve('mean-minus-k-sd', 0.2), 0.25);
+    expect(borrowed.grid.total).toEqual(recordOf(curve('mean-minus-k-sd', 0.2)).grid.total);
+    expect(borrowed.curveLnSd).toBeCloseTo(0.7372, 4);
+    const unknown = recordOf(curve('unknown', 0.2));
+    expect(unknown.designOverMean).toBe(1);
+    expect(unknown.grid.total[4]).toBeCloseTo(design, 12);
+    // Without a published scatter 0.25 is taken: 10^0.5.
+    expect(recordOf(curve('fractile-95-75', null)).designOverMean).toBeCloseTo(Math.sqrt(10), 9);
   });
 });
 

@@ -1,4 +1,5 @@
-import { CARRIED_IN_COV } from '../uncertainty/life-record.js';
+/** Spread of what a part carried before its first log. Engineering estimate without a source. */
+export const CARRIED_IN_COV = 0.5;
 
 /** What a part carried before its first log. */
 export interface CarriedIn {

@@ -2,6 +2,7 @@ import { describe, expect, it } from 'vitest';
 import { answeringGroups } from './answering-groups.js';
 import { bandRates, type BandRecord } from './band-rates.js';
 import { carriedIn } from './carried-in.js';
+import { excludedInterval } from './excluded-interval.js';
 import { plannedUse } from './planned-use.js';
 import { postUnlogged } from './post-unlogged.js';
 import { powerLawRate } from './power-law-rate.js';
@@ -113,6 +114,15 @@ describe('unlogged hours', () => {
     expect(carriedIn(null, 0.001)).toBeNull();
     expect(carriedIn(200, null)).toBeNull();
     expect(() => carriedIn(-1, 1)).toThrow(RangeError);
+  });
+});
+
+describe('an interval excluded by hand', () => {
+  it('stands at the larger figure until a second person confirms', () => {
+    expect(excludedInterval(0.4, 0.1, false)).toMatchObject({ damage: 0.4, basis: 'own-count' });
+    expect(excludedInterval(0.1, 0.4, false)).toMatchObject({ damage: 0.4, basis: 'band-rate' });
+    expect(excludedInterval(0.4, 0.1, true)).toMatchObject({ damage: 0.1, basis: 'band-rate' });
+    expect(() => excludedInterval(-1, 0, true)).toThrow(RangeError);
   });
 });
 

@@ -9,14 +9,8 @@ import { randomStreams } from '../../statistics/random-streams.js';
 import type { RandomSource } from '../../statistics/seeded-random.js';
 import type { UsageGroup } from '../../usage/usage-state.js';
 import { damageGrid } from '../damage-grid.js';
-import {
-  CARRIED_IN_COV,
-  MINER_COV,
-  type DamageShare,
-  type PartRecord,
-  type UseDay,
-  type UseRecord,
-} from '../life-record.js';
+import { CARRIED_IN_COV } from '../../usage/carried-in.js';
+import { MINER_COV, type DamageShare, type PartRecord, type UseDay, type UseRecord } from '../life-record.js';
 
 /** What kind of record a simulated vessel has. */
 export type Stratum = 'mixed' | 'one-season' | 'under-10-days' | 'half-unlogged' | 'no-wind';
