@@ -10,6 +10,7 @@ import { slowLogDamage } from './slow-log-damage.js';
 const SMALL = 1_000_000;
 const LARGE = 10_000_000;
 const ROUNDS = 5;
+const WARM_UPS = 5;
 
 /** What a counting process says about itself. */
 interface Process {
@@ -56,10 +57,10 @@ export const growthRow: BenchRow = {
       bare.push(runProcess().residentMiB);
       memorySmall.push(runProcess(small).residentMiB);
       memoryLarge.push(runProcess(large).residentMiB);
-      // The first count warms the compiler up; starting Node is no part of the growth either.
-      const timed = runProcess(small, small, large);
-      exponents.push(Math.log10(timed.busyMs[2] / timed.busyMs[1]));
-      damages = timed.damages[1];
+      // The first counts warm the compiler up; starting Node is no part of the growth either.
+      const timed = runProcess(...Array.from({ length: WARM_UPS + 1 }, () => small), large);
+      exponents.push(Math.log10(timed.busyMs[WARM_UPS + 1] / timed.busyMs[WARM_UPS]));
+      damages = timed.damages[WARM_UPS];
     }
     const slow = await slowLogDamage(small, SMALL);
     slow.forEach((damage, i) => expectSame(`load column ${i + 1}`, damages[i], damage));

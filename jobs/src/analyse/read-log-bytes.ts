@@ -1,11 +1,14 @@
 import { createReadStream } from 'node:fs';
 import { open } from 'node:fs/promises';
-import type { Readable } from 'node:stream';
-import { createGunzip } from 'node:zlib';
+import type { Readable, TransformOptions } from 'node:stream';
+import { createGunzip, type ZlibOptions } from 'node:zlib';
 
 const READ_BYTES = 1 << 18;
-/** Inflated ahead, on a thread of its own, while what came before is counted. */
-const READ_AHEAD_BYTES = 1 << 20;
+/** Inflating goes on ahead, on a thread of its own, while what came before is counted. */
+const INFLATING: ZlibOptions & TransformOptions = {
+  chunkSize: READ_BYTES,
+  readableHighWaterMark: 4 * READ_BYTES,
+};
 
 /**
  * The bytes of a log file, decompressed when they begin as gzip does, whatever the file is called.
@@ -21,7 +24,7 @@ export async function readLogBytes(path: string): Promise<Readable> {
   }
   const bytes = createReadStream(path, { highWaterMark: READ_BYTES });
   if (magic[0] !== 0x1f || magic[1] !== 0x8b) return bytes;
-  const inflated = createGunzip({ chunkSize: READ_BYTES, readableHighWaterMark: READ_AHEAD_BYTES });
+  const inflated = createGunzip(INFLATING);
   bytes.on('error', (error) => inflated.destroy(error));
   return bytes.pipe(inflated);
 }

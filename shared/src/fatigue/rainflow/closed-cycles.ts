@@ -103,9 +103,14 @@ export class ClosedCycles {
             out.append(parts[0].subarray(1));
             return;
           }
+          const live = bins?.view();
+          if (live !== undefined && parts.length === 0 && added === undefined) {
+            writeCycles(out, live, true);
+            return;
+          }
           writeMerged(out, () => {
             const cursors: CycleCursor[] = parts.map((part) => new PackedCursor(readerOf(part, 1)));
-            if (bins !== undefined) cursors.push(new TableCursor(bins.view()));
+            if (live !== undefined) cursors.push(new TableCursor(live));
             if (added !== undefined) cursors.push(new TableCursor(added));
             return cursors;
           });

@@ -144,7 +144,9 @@ export class CycleBins {
   /** The slots in use, by the tile's low and then its high. */
   private sortedSlots(): Int32Array {
     const { keys, places, slots, tiles } = this;
-    const used = new Int32Array(tiles);
+    if (tiles > slotScratch[0].length) slotScratch = [new Int32Array(tiles * 2), new Int32Array(tiles * 2)];
+    const used = slotScratch[0].subarray(0, tiles);
+    const other = slotScratch[1].subarray(0, tiles);
     let n = 0;
     for (let slot = 0; slot < slots; slot++) if (places[slot] !== 0) used[n++] = slot;
     let lowest = keys[used[0] * 2];
@@ -162,8 +164,9 @@ export class CycleBins {
     if (greatestLow - lowest > WIDEST_COUNTING_SORT || highest - leastHigh > WIDEST_COUNTING_SORT) {
       return used.sort((a, b) => keys[a * 2] - keys[b * 2] || keys[a * 2 + 1] - keys[b * 2 + 1]);
     }
-    const byHigh = countingSort(used, keys, 1, leastHigh, highest);
-    return countingSort(byHigh, keys, 0, lowest, greatestLow);
+    countingSort(used, other, keys, 1, leastHigh, highest);
+    countingSort(other, used, keys, 0, lowest, greatestLow);
+    return used;
   }
 
   private newTile(slot: number, tileLow: number, tileHigh: number): number {
@@ -206,6 +209,7 @@ export class CycleBins {
 }
 
 let scratch = emptyTableOf(1024);
+let slotScratch = [new Int32Array(1024), new Int32Array(1024)];
 
 function emptyTableOf(size: number): CycleTable {
   return { low: new Float64Array(size), high: new Float64Array(size), count: new Float64Array(size) };
@@ -216,23 +220,22 @@ function isAboveZero(count: number): number {
   return (0 - (count >>> 1) - (count & 1)) >>> 31;
 }
 
-/** Slots ordered by one word of their keys, between the smallest and the largest of them; equal ones keep their order. */
+/** Orders slots by one word of their keys, between the smallest and the largest of them; equal ones keep their order. */
 function countingSort(
   slots: Int32Array,
+  sorted: Int32Array,
   keys: Int32Array,
   word: number,
   smallest: number,
   largest: number,
-): Int32Array {
+): void {
   const starts = new Int32Array(largest - smallest + 2);
   for (let i = 0; i < slots.length; i++) starts[keys[slots[i] * 2 + word] - smallest + 1]++;
   for (let i = 1; i < starts.length; i++) starts[i] += starts[i - 1];
-  const sorted = new Int32Array(slots.length);
   for (let i = 0; i < slots.length; i++) {
     const slot = slots[i];
     sorted[starts[keys[slot * 2 + word] - smallest]++] = slot;
   }
-  return sorted;
 }
 
 /** Multiplicative hash: the high bits of the product depend on all bits of both. */

@@ -17,7 +17,12 @@ export function mergeCycleTables(tables: readonly CycleTable[]): CycleTable {
   return round.length === 0 ? emptyCycleTable() : round[0];
 }
 
+/** A table this many times longer than the other is copied in stretches. */
+const MUCH_LONGER = 16;
+
 function mergeTwo(one: CycleTable, two: CycleTable): CycleTable {
+  if (one.count.length > MUCH_LONGER * two.count.length) return insertFew(one, two);
+  if (two.count.length > MUCH_LONGER * one.count.length) return insertFew(two, one);
   const room = one.count.length + two.count.length;
   const low = new Float64Array(room);
   const high = new Float64Array(room);
@@ -50,4 +55,49 @@ function mergeTwo(one: CycleTable, two: CycleTable): CycleTable {
   return n === room
     ? { low, high, count }
     : { low: low.slice(0, n), high: high.slice(0, n), count: count.slice(0, n) };
+}
+
+/** A few cycles put among many: what lies between their places is copied as a whole. */
+function insertFew(many: CycleTable, few: CycleTable): CycleTable {
+  const room = many.count.length + few.count.length;
+  const low = new Float64Array(room);
+  const high = new Float64Array(room);
+  const count = new Float64Array(room);
+  let from = 0;
+  let n = 0;
+  const copyTo = (to: number) => {
+    low.set(many.low.subarray(from, to), n);
+    high.set(many.high.subarray(from, to), n);
+    count.set(many.count.subarray(from, to), n);
+    n += to - from;
+    from = to;
+  };
+  for (let i = 0; i < few.count.length; i++) {
+    copyTo(placeOf(many, few.low[i], few.high[i]));
+    if (from < many.count.length && many.low[from] === few.low[i] && many.high[from] === few.high[i]) {
+      copyTo(from + 1);
+      count[n - 1] += few.count[i];
+    } else {
+      low[n] = few.low[i];
+      high[n] = few.high[i];
+      count[n++] = few.count[i];
+    }
+  }
+  copyTo(many.count.length);
+  return n === room
+    ? { low, high, count }
+    : { low: low.slice(0, n), high: high.slice(0, n), count: count.slice(0, n) };
+}
+
+/** The first place in a table that is not below a pair. */
+function placeOf(table: CycleTable, low: number, high: number): number {
+  let from = 0;
+  let to = table.count.length;
+  while (from < to) {
+    const middle = (from + to) >> 1;
+    const below = table.low[middle] < low || (table.low[middle] === low && table.high[middle] < high);
+    if (below) from = middle + 1;
+    else to = middle;
+  }
+  return from;
 }

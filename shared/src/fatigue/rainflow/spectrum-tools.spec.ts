@@ -1,13 +1,16 @@
+import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
 import { astmCounts } from './astm-counts.js';
 import { closeTies } from './close-ties.js';
 import { coarsenSpectrum } from './coarsen-spectrum.js';
 import { commonStep } from './common-step.js';
+import { cycleTableOf } from './cycle-table.js';
 import { dropSmallRanges } from './drop-small-ranges.js';
 import { insertTurningPoint } from './insert-turning-point.js';
 import { emptySpectrum } from './load-spectrum.js';
 import { mapAffine } from './map-affine.js';
 import { mergeAll, mergeSpectra } from './merge-spectra.js';
+import { mergeCycleTables } from './merge-cycle-tables.js';
 import { RainflowCounter } from './rainflow-counter.js';
 import { decodeSpectrum, encodeSpectrum } from './spectrum-codec.js';
 import { spectrumOf } from './spectrum-of.js';
@@ -135,6 +138,44 @@ describe('grids', () => {
       { step: 1 },
     );
     expect({ ...coarse, step: 1, turningPoints: 0 }).toEqual({ ...expected, turningPoints: 0 });
+  });
+});
+
+describe('tables of cycles', () => {
+  const table = (pairs: [number, number, number][]) => cycleTableOf(...columnsOf(pairs));
+  const columnsOf = (pairs: [number, number, number][]): [number[], number[], number[]] => [
+    pairs.map(([low]) => low),
+    pairs.map(([, high]) => high),
+    pairs.map(([, , count]) => count),
+  ];
+
+  it('add up the same whether long and short, alike or many', () => {
+    const pair = fc.tuple(
+      fc.integer({ min: 0, max: 9 }),
+      fc.integer({ min: 10, max: 20 }),
+      fc.integer({ min: 1, max: 5 }),
+    );
+    const sized = fc.oneof(
+      fc.array(pair, { maxLength: 4 }),
+      fc.array(pair, { minLength: 60, maxLength: 200 }),
+    );
+    fc.assert(
+      fc.property(fc.array(sized, { maxLength: 5 }), (parts) => {
+        const sums = new Map<string, number>();
+        for (const [low, high, count] of parts.flat()) {
+          sums.set(`${low} ${high}`, (sums.get(`${low} ${high}`) ?? 0) + count);
+        }
+        const merged = mergeCycleTables(parts.map(table));
+        const keys = Array.from(merged.low, (low, i) => `${low} ${merged.high[i]}`);
+        expect(new Map(keys.map((key, i) => [key, merged.count[i]]))).toEqual(sums);
+        expect(keys).toHaveLength(sums.size);
+        const ascending = [...merged.low.keys()].slice(1).every((i) => {
+          const [before, after] = [i - 1, i].map((at) => merged.low[at] * 100 + merged.high[at]);
+          return before < after;
+        });
+        expect(ascending).toBe(true);
+      }),
+    );
   });
 });
 
