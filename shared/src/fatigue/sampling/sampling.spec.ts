@@ -6,6 +6,7 @@ import { seededRandom } from '../statistics/seeded-random.js';
 import { damageSlope } from './damage-slope.js';
 import { decimated } from './decimated.js';
 import { dominantFrequencyHz } from './dominant-frequency.js';
+import { hampelOutliers } from './hampel-outliers.js';
 import { samplingCorrection } from './sampling-correction.js';
 import { summaryLogBounds } from './summary-log-bounds.js';
 import { thinnedDamage } from './thinned-damage.js';
@@ -106,6 +107,24 @@ describe('sampling correction', () => {
     const total = Float64Array.from({ length: 9 }, (_, i) => 0.3 * Math.exp(4.5 * lnStep * (i - 4)));
     expect(damageSlope({ lnStep, total })).toBeCloseTo(4.5, 12);
     expect(damageSlope({ lnStep, total: new Float64Array(9) })).toBe(0);
+  });
+});
+
+describe('samples that stand apart', () => {
+  it('LM-06: 50 among 10.1, 10.2, 10.0, 10.1, 9.9, 10.0 (published example of the Hampel identifier)', () => {
+    const [outlier, ...rest] = hampelOutliers([10.1, 10.2, 10.0, 50.0, 10.1, 9.9, 10.0]);
+    expect(rest).toEqual([]);
+    expect(outlier.index).toBe(3);
+    expect(outlier.median).toBeCloseTo(10.1, 12);
+    expect(outlier.deviation).toBeCloseTo(0.14826, 5);
+  });
+
+  it('leaves a load alone that stands still between steps of its resolution', () => {
+    const steady = [5, 5, 5, 5.1, 5, 5, 5];
+    expect(hampelOutliers(steady).map(({ index }) => index)).toEqual([3]);
+    expect(hampelOutliers(steady, { floor: 0.2 })).toEqual([]);
+    expect(hampelOutliers([])).toEqual([]);
+    expect(() => hampelOutliers(steady, { halfWidth: 0 })).toThrow(RangeError);
   });
 });
 
