@@ -1,6 +1,7 @@
 import { normalSource } from '../statistics/normal-source.js';
 import { answeringGroups } from '../usage/answering-groups.js';
 import type { UsageGroup, UsageState } from '../usage/usage-state.js';
+import { damageUnderSail, hoursUnderSail } from './days-under-sail.js';
 import { damageOnGrid, GRID_SIZE, lnNode } from './damage-on-grid.js';
 import { type LifeDraws, lnFactors, type YearPool, YEARS_IN_POOL } from './life-draws.js';
 import type { DetailRecord, PartRecord, UseRecord } from './life-record.js';
@@ -241,22 +242,14 @@ class RateRecord {
     return this.sumsFor(wanted, this.drawn);
   }
 
-  /** Damage per hour of each year of a pool over that of the whole record, at the recorded gain. */
+  /** Damage per hour under sail of each year of a pool over that of the whole record, at the recorded gain. */
   poolRatios(pool: YearPool | null): Float64Array {
     const ratios = new Float64Array(YEARS_IN_POOL).fill(1);
     if (pool === null) return ratios;
-    const size = this.groups.length;
-    const days = this.use.days.length;
-    const hours = new Float64Array(days);
-    const damage = new Float64Array(days);
-    let allHours = 0;
-    let allDamage = 0;
-    for (let day = 0; day < days; day++) {
-      for (let g = 0; g < size; g++) hours[day] += this.daysLogged[day * size + g];
-      damage[day] = this.grid[day * GRID_SIZE + (GRID_SIZE - 1) / 2];
-      allHours += hours[day];
-      allDamage += damage[day];
-    }
+    const hours = hoursUnderSail(this.use);
+    const damage = damageUnderSail(this.use, this.detail);
+    const allHours = hours.reduce((sum, part) => sum + part, 0);
+    const allDamage = damage.reduce((sum, part) => sum + part, 0);
     if (allDamage === 0) return ratios;
     for (let j = 0; j < YEARS_IN_POOL; j++) {
       let ofYear = 0;

@@ -4,6 +4,8 @@ import { normalSource } from '../statistics/normal-source.js';
 import type { RandomStreams } from '../statistics/random-streams.js';
 import type { RandomSource } from '../statistics/seeded-random.js';
 import { CARRIED_IN_COV } from '../usage/carried-in.js';
+import type { UsageState } from '../usage/usage-state.js';
+import { groupsUnderSail, hoursUnderSail } from './days-under-sail.js';
 import type { UseRecord } from './life-record.js';
 
 /** Ways a year can turn out, drawn once and picked from. */
@@ -69,7 +71,15 @@ export function lifeDraws(
   const resampledDays = new Int32Array(draws * days);
   for (let i = 0; i < draws; i++) fillWithBlocks(resampledDays, i * days, days, days, block, weather);
   const loggedHours = sum(use.days.map((day) => sum(day.loggedHours)));
-  const hoursPerDay = loggedHours / logged.length;
+  const counted = groupsUnderSail(use);
+  const hours = hoursUnderSail(use);
+  const sailed = logged.filter((day) => hours[day] > 0);
+  const hoursPerDay = sum([...hours]) / sailed.length;
+  const plannedUnderSail = sum(
+    (Object.entries(use.plannedHoursPerYear) as [UsageState, number][])
+      .filter(([state]) => use.groups.some((group, index) => group.state === state && counted[index]))
+      .map(([, planned]) => planned),
+  );
   const unlogged = sum(use.otherUnloggedHours) + sum(use.days.map((day) => sum(day.unloggedHours)));
   return {
     use,
@@ -80,8 +90,8 @@ export function lifeDraws(
     blockDays: block,
     ...seasonsOf(use, loggedHours, draws, years, streams('seasons')),
     yearPicks: picks(draws * years, streams('years')),
-    yearPool: poolOf(logged, sum(Object.values(use.plannedHoursPerYear)) / hoursPerDay, streams('pool')),
-    unloggedPool: unlogged > 0 ? poolOf(logged, unlogged / hoursPerDay, streams('unlogged pool')) : null,
+    yearPool: poolOf(sailed, plannedUnderSail / hoursPerDay, streams('pool')),
+    unloggedPool: unlogged > 0 ? poolOf(sailed, unlogged / hoursPerDay, streams('unlogged pool')) : null,
     unloggedPicks: picks(draws, streams('unlogged')),
     lnGains: use.calibrations.map(({ key, gainCov }) => lnFactors(draws, gainCov, streams(`gain ${key}`))),
     carriedIn: factors(draws, CARRIED_IN_COV, streams('carried in')),

@@ -1,4 +1,4 @@
-import { GRID_SIZE } from './damage-on-grid.js';
+import { damageUnderSail, hoursUnderSail } from './days-under-sail.js';
 import type { LifeDraws } from './life-draws.js';
 import type { DetailRecord } from './life-record.js';
 
@@ -29,9 +29,8 @@ const FURTHER_WORST_DAY = 0.5;
 export function rateDoubt(draws: LifeDraws, detail: DetailRecord): RateDoubt {
   const { use, blockDays, resampledDays } = draws;
   const days = use.days.length;
-  const middle = (GRID_SIZE - 1) / 2;
-  const hours = Float64Array.from(use.days, (day) => day.loggedHours.reduce((sum, part) => sum + part, 0));
-  const damage = Float64Array.from({ length: days }, (_, day) => detail.grid.byDay[day * GRID_SIZE + middle]);
+  const hours = hoursUnderSail(use);
+  const damage = damageUnderSail(use, detail);
   const allHours = hours.reduce((sum, part) => sum + part, 0);
   const allDamage = damage.reduce((sum, part) => sum + part, 0);
   const widening = new Float64Array(draws.draws).fill(1);

@@ -342,6 +342,45 @@ describe('the life of a part', () => {
     expect((paths[0].cumulative[1] - paths[0].cumulative[0]) / perYear).toBeCloseTo(1, 9);
   });
 
+  it('does not take days in harbour for calm weather at sea', () => {
+    const sea = vessel(UNEVEN);
+    // The same days at sea with two days at rest before each of them.
+    const harbour: UseRecord = {
+      ...sea.use,
+      groups: [...sea.use.groups, { state: 'at-rest-afloat', band: null }],
+      days: sea.use.days.flatMap((day) => [
+        { season: 0, loggedHours: [0, 24], unloggedHours: [0, 0] },
+        { season: 0, loggedHours: [0, 24], unloggedHours: [0, 0] },
+        { ...day, loggedHours: [5, 19], unloggedHours: [0, 0] },
+      ]),
+    };
+    const [detail] = sea.part.details;
+    const byDay = new Float64Array(detail.grid.byDay.length * 3);
+    for (let day = 0; day < UNEVEN.length; day++) {
+      byDay.set(
+        detail.grid.byDay.subarray(day * GRID_SIZE, (day + 1) * GRID_SIZE),
+        (3 * day + 2) * GRID_SIZE,
+      );
+    }
+    const inHarbour = {
+      ...detail,
+      grid: { ...detail.grid, byDay },
+      shares: detail.shares.map((share) => ({ ...share, day: 3 * share.day + 2 })),
+      calibrationOfDay: harbour.days.map(() => 0),
+    };
+    const fanOf = (use: UseRecord, part: PartRecord) => {
+      const [row] = forecastFan(lifeDraws(use, randomStreams(1), { draws: 4000 }), part, '2026-05-01', [
+        '2031-05-01',
+      ]).rows;
+      return { median: row.median, spread: Math.log(row.p95 / row.p05) };
+    };
+    const atSea = fanOf(sea.use, sea.part);
+    const mixed = fanOf(harbour, { ...sea.part, details: [inHarbour] });
+    expect(Math.abs(mixed.median / atSea.median - 1)).toBeLessThan(0.05);
+    // Three times as many days make longer blocks, no wilder weather.
+    expect(mixed.spread / atSea.spread).toBeLessThan(1.3);
+  });
+
   it('says which unlogged hours no record answers for', () => {
     const made = vessel(EVEN);
     const groups = [4, 5, null].map((band) => ({ state: 'sailing' as const, band }));
