@@ -15,6 +15,17 @@ export const paths = {
   administration: fixed('/administration'),
   profile: fixed('/profile'),
   reference: fixed('/reference'),
+  addCurve: fixed('/reference/curves/new'),
+  reviseCurve: page(
+    '/reference/curves/:curveId/correct',
+    (curveId: string) => `/reference/curves/${encodeURIComponent(curveId)}/correct`,
+  ),
+  addConstruction: fixed('/reference/constructions/new'),
+  reviseConstruction: page(
+    '/reference/constructions/:constructionId/correct',
+    (constructionId: string) => `/reference/constructions/${encodeURIComponent(constructionId)}/correct`,
+  ),
+  help: fixed('/help'),
   curve: page(
     '/reference/curves/:curveId',
     (curveId: string) => `/reference/curves/${encodeURIComponent(curveId)}`,

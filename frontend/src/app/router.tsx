@@ -34,6 +34,11 @@ const withAntd = (children: RouteObject[]): RouteObject => ({
 /** Pages without antd: light enough for a phone on a poor line. */
 const lightPages: RouteObject[] = [
   lazyPage(
+    paths.help.pattern,
+    () => import('../pages/help/help.page'),
+    (module) => module.HelpPage,
+  ),
+  lazyPage(
     paths.reference.pattern,
     () => import('../pages/reference/reference.page'),
     (module) => module.ReferencePage,
@@ -99,6 +104,26 @@ const lightPages: RouteObject[] = [
 
 /** Pages with forms. */
 const antdPages: RouteObject[] = [
+  lazyPage(
+    paths.addCurve.pattern,
+    () => import('../pages/reference/add-curve.page'),
+    (module) => module.AddCurvePage,
+  ),
+  lazyPage(
+    paths.reviseCurve.pattern,
+    () => import('../pages/reference/revise-curve.page'),
+    (module) => module.ReviseCurvePage,
+  ),
+  lazyPage(
+    paths.addConstruction.pattern,
+    () => import('../pages/reference/add-construction.page'),
+    (module) => module.AddConstructionPage,
+  ),
+  lazyPage(
+    paths.reviseConstruction.pattern,
+    () => import('../pages/reference/revise-construction.page'),
+    (module) => module.ReviseConstructionPage,
+  ),
   lazyPage(
     paths.registerVessel.pattern,
     () => import('../pages/vessels/register-vessel.page'),

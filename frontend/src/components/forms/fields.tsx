@@ -5,7 +5,8 @@ import type { ReactNode } from 'react';
 import { parseNumber } from '../../lib/formatting/format';
 
 interface FieldProps {
-  name: string;
+  /** Key of the form's values; a path where the values hold a list. */
+  name: string | (string | number)[];
   label: string;
   hint?: ReactNode;
   /** Said when the field was left empty; without it the field may stay empty. */
@@ -60,7 +61,13 @@ export function NumberField({
   required,
   unit,
   whole = false,
-}: FieldProps & { unit?: string; whole?: boolean }) {
+  between,
+}: FieldProps & {
+  unit?: string;
+  whole?: boolean;
+  /** Bounds the figure must keep, for figures that do not travel as they are typed. */
+  between?: [lowest: number, highest: number];
+}) {
   return (
     <Form.Item
       name={name}
@@ -69,10 +76,15 @@ export function NumberField({
       rules={[
         ...(required ? [{ required: true, whitespace: true, message: required }] : []),
         {
-          validator: (_rule, value: unknown) =>
-            typeof value !== 'string' || value.trim() === '' || parseNumber(value) !== null
-              ? Promise.resolve()
-              : Promise.reject(new Error(NOT_A_FIGURE)),
+          validator: (_rule, value: unknown) => {
+            if (typeof value !== 'string' || value.trim() === '') return Promise.resolve();
+            const figure = parseNumber(value);
+            if (figure === null) return Promise.reject(new Error(NOT_A_FIGURE));
+            if (between && (figure < between[0] || figure > between[1])) {
+              return Promise.reject(new Error(`Write a figure from ${between[0]} to ${between[1]}.`));
+            }
+            return Promise.resolve();
+          },
         },
       ]}
     >

@@ -12,8 +12,10 @@ const MOST_CYCLES = 1e9;
 /**
  * Points of a curve for drawing: every knee, and points between them even on the logarithmic axis, from 10^4 to 10^9
  * cycles. Straight between points on two logarithmic axes, so few are enough.
+ *
+ * @param also ranges that get a point of their own where they lie within the drawing
  */
-export function curvePoints(curve: Pick<CurveDto, 'segments'>): CurvePoint[] {
+export function curvePoints(curve: Pick<CurveDto, 'segments'>, also: readonly number[] = []): CurvePoint[] {
   const [high] = curve.segments;
   const low = curve.segments[curve.segments.length - 1];
   const rangeAt = (cycles: number, segment: CurveDto['segments'][number]) =>
@@ -25,7 +27,9 @@ export function curvePoints(curve: Pick<CurveDto, 'segments'>): CurvePoint[] {
     { length: steps - 1 },
     (_, index) => top * (bottom / top) ** ((index + 1) / steps),
   );
-  const knees = curve.segments.map(({ above }) => above).filter((above) => above > bottom && above < top);
+  const knees = [...curve.segments.map(({ above }) => above), ...also].filter(
+    (above) => above > bottom && above < top,
+  );
   // The ends stand as they are: one rounded below a cut-off would have no life and be lost.
   return [...new Set([top, ...between, bottom, ...knees])]
     .sort((a, b) => b - a)

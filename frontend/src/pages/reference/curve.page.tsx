@@ -1,22 +1,26 @@
-import type { CurveDto } from '@stayledger/shared/contracts/curves';
+import type { CurveDto, ListedCurveDto } from '@stayledger/shared/contracts/curves';
 import { useQuery } from '@tanstack/react-query';
-import { useMemo } from 'react';
 import { Link, useParams } from 'react-router-dom';
 import { paths } from '../../app/paths';
-import { LineChart } from '../../components/charts/line-chart';
 import { QueryView } from '../../components/feedback/query-view';
 import { PageHeading } from '../../components/page-heading/page-heading';
+import { ButtonLink } from '../../components/plain-button/plain-button';
 import { DataTable } from '../../components/tables/data-table';
+import { CurveChart } from '../../features/reference/curve-chart';
 import { CurveFacts } from '../../features/reference/curve-facts';
-import { curvePoints } from '../../features/reference/curve-points';
-import { MEASURE_WORDS, measureUnit } from '../../features/reference/reference-words';
+import { lineOfSegments } from '../../features/reference/curve-line';
+import { measureUnit } from '../../features/reference/reference-words';
 import { referenceQueries } from '../../features/reference/reference.queries';
 import styles from '../../features/reference/reference.module.css';
 import { useFormat } from '../../lib/formatting/use-format';
+import { useSession } from '../../lib/session';
 
 export function CurvePage() {
   const { curveId = '' } = useParams();
   const query = useQuery(referenceQueries.curve(curveId));
+  const session = useSession();
+  const isOwn = (firm: ListedCurveDto['firm']) =>
+    session.permissions.includes('curves:add') && session.roles.some(({ firmId }) => firmId === firm?.id);
   return (
     <QueryView query={query} loadingLabel="Opening the curve">
       {(curve) => (
@@ -24,59 +28,20 @@ export function CurvePage() {
           <PageHeading
             title={curve.name}
             above={<Link to={paths.reference.pattern}>Reference data</Link>}
-            below={curve.appliesTo}
+            below={curve.firm ? `${curve.appliesTo}. Added by ${curve.firm.name}` : curve.appliesTo}
+            actions={
+              isOwn(curve.firm) && lineOfSegments(curve.segments) ? (
+                <ButtonLink to={paths.reviseCurve.to(curve.id)}>Correct this curve</ButtonLink>
+              ) : undefined
+            }
           />
-          <CurveChart curve={curve} />
+          <CurveChart curve={curve} csvName={curve.id} />
           <h2>What it is and where it comes from</h2>
           <CurveFacts curve={curve} />
           <Segments curve={curve} />
         </>
       )}
     </QueryView>
-  );
-}
-
-function CurveChart({ curve }: { curve: CurveDto }) {
-  const format = useFormat();
-  const points = useMemo(() => curvePoints(curve), [curve]);
-  const unit = measureUnit(curve.measure);
-  const range = `${MEASURE_WORDS[curve.measure]}${unit ? `, ${unit}` : ''}`;
-  const rangeTitle = `${range.charAt(0).toUpperCase()}${range.slice(1)}`;
-  return (
-    <LineChart
-      title="Range against cycles to failure"
-      headingLevel={2}
-      description="Both axes are logarithmic: one step to the left is a tenth of the life."
-      series={[
-        { id: 'curve', label: curve.name, points: points.map(({ range: y, cycles: x }) => ({ x, y })) },
-      ]}
-      xScale="log"
-      yScale="log"
-      xTitle="Cycles to failure"
-      yTitle={rangeTitle}
-      formatX={(x) => format.powerOfTen(Number(x))}
-      formatY={(y) => format.significant(y, 3)}
-      rows={points}
-      rowKey={(point) => String(point.range)}
-      columns={[
-        {
-          key: 'range',
-          title: rangeTitle,
-          numeric: true,
-          render: (point) => format.significant(point.range, 4),
-          value: (point) => point.range,
-        },
-        {
-          key: 'cycles',
-          title: 'Cycles to failure',
-          numeric: true,
-          render: (point) => format.scientific(point.cycles, 4),
-          value: (point) => point.cycles,
-        },
-      ]}
-      csvName={curve.id}
-      emptyText="This curve has no part between ten thousand and a thousand million cycles."
-    />
   );
 }
 
