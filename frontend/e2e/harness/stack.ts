@@ -108,6 +108,8 @@ export async function startStack(): Promise<Stack> {
     COUNTING_THREADS: '1',
     LOG_LEVEL: 'warn',
     REDIS_URL: '',
+    // Each visitor names an address of its own, as behind a proxy; see newVisitor.
+    TRUST_PROXY: '1',
   };
   const log: string[] = [];
   let server: ChildProcess | undefined;
