@@ -16,9 +16,14 @@ import { LoadLog } from '../load-logs/load-log.entity.js';
 import { StoredSpectrum } from '../load-logs/load-spectrum.entity.js';
 import { LogChannel } from '../load-logs/log-channel.entity.js';
 import { FittedPart } from '../parts/fitted-part.entity.js';
+import { PartPhoto } from '../part-photos/part-photo.entity.js';
 import { Position } from '../rig/position.entity.js';
+import { RigGeometryRow } from '../rig/rig-geometry.entity.js';
+import { SensorEvent } from '../sensors/sensor-event.entity.js';
+import { Sensor } from '../sensors/sensor.entity.js';
 import { User } from '../users/user.entity.js';
 import { VesselAccess } from '../vessels/vessel-access.entity.js';
+import { VesselStanding } from '../vessels/vessel-standing.entity.js';
 import { Vessel } from '../vessels/vessel.entity.js';
 import { ServiceSetting } from './service-setting.entity.js';
 
@@ -37,8 +42,12 @@ export const ENTITIES = [
   LogChannel,
   Membership,
   PartDetail,
+  PartPhoto,
   PartStanding,
   Position,
+  RigGeometryRow,
+  Sensor,
+  SensorEvent,
   ServiceSetting,
   SessionRow,
   SignInAttempt,
@@ -47,4 +56,5 @@ export const ENTITIES = [
   User,
   Vessel,
   VesselAccess,
+  VesselStanding,
 ];

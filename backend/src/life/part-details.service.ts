@@ -69,6 +69,8 @@ export class PartDetailsService {
       youngMpa: construction.youngGpa * 1000,
       upperTerminal: part.upperTerminal,
       lowerTerminal: part.lowerTerminal,
+      upperArticulation: part.hardware?.upperArticulation ?? undefined,
+      lowerArticulation: part.hardware?.lowerArticulation ?? undefined,
       thread: part.threadSize === null ? null : (threadSize(part.threadSize) ?? null),
       pinDiameterMm: part.pinDiameterMm,
       chainplate: null,

@@ -1,9 +1,10 @@
 import { Entity, Index } from '@mikro-orm/core';
-import type { TERMINALS } from '@stayledger/shared/contracts/parts';
+import type { PartHardware, TERMINALS } from '@stayledger/shared/contracts/parts';
 import { Construction } from '../constructions/construction.entity.js';
 import {
   ChoiceColumn,
   DayColumn,
+  JsonColumn,
   NumberColumn,
   References,
   ReferencesVersion,
@@ -61,6 +62,10 @@ export class FittedPart extends EditableRow {
 
   @NumberColumn({ nullable: true })
   pinDiameterMm: number | null = null;
+
+  /** Null: nobody described it. */
+  @JsonColumn({ nullable: true })
+  hardware: PartHardware | null = null;
 
   @TextColumn({ default: '' })
   batch = '';

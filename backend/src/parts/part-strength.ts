@@ -1,5 +1,6 @@
 import { readFileSync } from 'node:fs';
 import { terminalsFileSchema, type ConstructionDto } from '@stayledger/shared/contracts/constructions';
+import type { PartHardware } from '@stayledger/shared/contracts/parts';
 import { assemblyStrength, type AssemblyStrength } from '@stayledger/shared/rig/assembly-strength';
 import {
   constructionSize,
@@ -43,14 +44,22 @@ export function breakingLoadOf(
 }
 
 /** Strength of the part as assembled. What nobody recorded is named as unknown, never taken for strong. */
-export function assemblyOf(part: FittedPart): AssemblyStrength {
+export function assemblyOf(
+  part: Pick<FittedPart, 'breakingLoadKn' | 'upperTerminal' | 'lowerTerminal' | 'hardware'>,
+): AssemblyStrength {
   return assemblyStrength({
     wireBreakingLoadKn: part.breakingLoadKn,
     upperTerminalFactor: terminal(part.upperTerminal).staticFactor,
     lowerTerminalFactor: terminal(part.lowerTerminal).staticFactor,
-    turnbuckleKn: null,
-    toggleKn: null,
-    pinKn: null,
-    chainplateKn: null,
+    turnbuckleKn: strengthOf(part.hardware?.turnbuckle),
+    toggleKn: strengthOf(part.hardware?.toggle),
+    pinKn: strengthOf(part.hardware?.pin),
+    chainplateKn: strengthOf(part.hardware?.chainplate),
   });
+}
+
+/** undefined: the assembly has none; null: not known. */
+function strengthOf(element: PartHardware['pin'] | undefined): number | null | undefined {
+  if (element === undefined) return null;
+  return element.there ? element.breakingLoadKn : undefined;
 }

@@ -41,6 +41,7 @@ export function toFittedPartDto(context: PartWithContext): FittedPartDto {
     lowerTerminal: part.lowerTerminal,
     threadSize: part.threadSize,
     pinDiameterMm: part.pinDiameterMm,
+    hardware: part.hardware,
     batch: part.batch,
     certificate: part.certificate,
     fittedOn: part.fittedOn,

@@ -46,10 +46,10 @@ interface GoverningRow {
 
 /** Each sort as SQL: the key, its type for the cursor, and whether the largest comes first. */
 const SORTS: Record<Query['sort'], { key: string; type: string; descending: boolean }> = {
-  due: { key: `coalesce(s.due_on, 'infinity'::date)`, type: 'date', descending: false },
-  name: { key: 'lower(v.name)', type: 'text', descending: false },
+  due: { key: `coalesce(s.first_due_on, 'infinity'::date)`, type: 'date', descending: false },
+  name: { key: 'lower(s.name)', type: 'text', descending: false },
   'last-log': {
-    key: `coalesce(l.last_log_at, '-infinity'::timestamptz)`,
+    key: `coalesce(s.last_log_at, '-infinity'::timestamptz)`,
     type: 'timestamptz',
     descending: true,
   },
@@ -59,7 +59,7 @@ const FILTERS: Record<Query['filter'], string> = {
   all: 'true',
   overdue: 's.overdue > 0',
   due: 's.due > 0',
-  waiting: 'l.logs_waiting > 0',
+  waiting: 's.logs_waiting > 0',
   'not-assessed': 's.not_assessed > 0',
 };
 
@@ -69,7 +69,10 @@ const DUE_STATE = `case
     when s.replace_by_on <= (v.today_on + interval '12 months')::date then 'due'
     else 'in-date' end`;
 
-/** The fleet, one row per vessel, from the standings that are kept per part: no ledger is added up here. */
+/**
+ * The fleet, one row per vessel, from the summary the database keeps of each: neither parts nor ledgers are added up
+ * here. Dates in the summary are sorted, so `width_bucket` counts those up to a day.
+ */
 @Injectable()
 export class FleetList {
   constructor(
@@ -89,31 +92,20 @@ export class FleetList {
           where v.archived_at is null and ${permitted.sql}
             and (?::text is null or v.name ilike ? or v.home_port ilike ?)),
        s as (
-         select s.vessel_id, count(*)::int as parts, min(s.replace_by_on) as due_on,
-                count(*) filter (where s.replace_by_on is not null and ${DUE_STATE} = 'overdue')::int as overdue,
-                count(*) filter (where s.replace_by_on is not null and ${DUE_STATE} = 'due')::int as due,
-                count(*) filter (where s.assessment = 'assessed')::int as assessed,
-                count(*) filter (where s.assessment = 'not-assessed')::int as not_assessed,
-                count(*) filter (where s.assessment = 'calendar-only')::int as calendar_only
-           from v join part_standing s on s.vessel_id = v.id
-           join fitted_part p on p.id = s.fitted_part_id and p.removed_on is null
-          group by s.vessel_id),
-       l as (
-         select g.vessel_id, count(*) filter (where g.state = 'counted')::int as logs_waiting,
-                coalesce(sum(g.logged_hours) filter (where g.state = 'posted'), 0) as logged_hours,
-                max(g.to_at) filter (where g.state in ('posted', 'counted')) as last_log_at
-           from v join load_log g on g.vessel_id = v.id group by g.vessel_id)
-       select v.id, v.name, v.rig_type, v.home_port, v.use_kind, v.zone,
-              coalesce(s.parts, 0) as parts, coalesce(s.overdue, 0) as overdue, coalesce(s.due, 0) as due,
-              coalesce(s.assessed, 0) as assessed, coalesce(s.not_assessed, 0) as not_assessed,
-              coalesce(s.calendar_only, 0) as calendar_only, coalesce(l.logs_waiting, 0) as logs_waiting,
-              coalesce(l.logged_hours, 0) as logged_hours, l.last_log_at,
-              (${sort.key})::text as sort_key, lower(v.name) as lower_name
-         from v left join s on s.vessel_id = v.id left join l on l.vessel_id = v.id
+         select v.*, coalesce(s.parts, 0) as parts, coalesce(s.assessed, 0) as assessed,
+                coalesce(s.not_assessed, 0) as not_assessed, coalesce(s.calendar_only, 0) as calendar_only,
+                coalesce(s.used_up, 0) + coalesce(width_bucket(v.today_on - 1, s.replace_by_dates), 0) as overdue,
+                coalesce(width_bucket((v.today_on + interval '12 months')::date, s.replace_by_dates)
+                       - width_bucket(v.today_on - 1, s.replace_by_dates), 0) as due,
+                s.first_due_on, coalesce(s.logs_waiting, 0) as logs_waiting,
+                coalesce(s.logged_hours, 0) as logged_hours, s.last_log_at
+           from v left join vessel_standing s on s.vessel_id = v.id)
+       select s.*, (${sort.key})::text as sort_key, lower(s.name) as lower_name
+         from s
         where ${FILTERS[query.filter]}
           and (?::text is null or ${sort.key} ${sort.descending ? '<' : '>'} ?::${sort.type}
-            or (${sort.key} = ?::${sort.type} and (lower(v.name), v.id) > (?::text, ?::uuid)))
-        order by ${sort.key} ${sort.descending ? 'desc' : 'asc'}, lower(v.name), v.id
+            or (${sort.key} = ?::${sort.type} and (lower(s.name), s.id) > (?::text, ?::uuid)))
+        order by ${sort.key} ${sort.descending ? 'desc' : 'asc'}, lower(s.name), s.id
         limit ?`,
       [
         now,

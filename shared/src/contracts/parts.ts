@@ -13,6 +13,27 @@ export const TERMINALS = [
   'unknown',
 ] as const;
 
+/** How freely an end turns; the same words as `shared/rig/articulation`. */
+export const ARTICULATIONS = ['both-planes', 'one-plane', 'none', 'seized'] as const;
+
+const elementSchema = z.strictObject({
+  /** False where the assembly has none, such as a lashing instead of a turnbuckle. */
+  there: z.boolean(),
+  /** kN by its papers; null: not known. */
+  breakingLoadKn: z.number().positive('The breaking load must be above zero.').max(100_000).nullable(),
+});
+/** What stands in line with the wire between mast and hull, and how its ends turn. */
+export const partHardwareSchema = z.strictObject({
+  turnbuckle: elementSchema,
+  toggle: elementSchema,
+  pin: elementSchema,
+  chainplate: elementSchema,
+  /** null: nobody looked; one plane is taken, and said. */
+  upperArticulation: z.enum(ARTICULATIONS).nullable(),
+  lowerArticulation: z.enum(ARTICULATIONS).nullable(),
+});
+export type PartHardware = z.infer<typeof partHardwareSchema>;
+
 const partFields = {
   constructionId: z.string().min(1).max(80),
   diameterMm: z.number().positive('The diameter must be above zero.').max(120),
@@ -24,6 +45,8 @@ const partFields = {
   lowerTerminal: z.enum(TERMINALS),
   threadSize: z.string().max(20).nullable(),
   pinDiameterMm: z.number().positive().max(200).nullable(),
+  /** null: not described; each element then counts as there and of unknown strength. */
+  hardware: partHardwareSchema.nullable(),
   batch: z.string().max(120),
   certificate: z.string().max(200),
   /** null: not known; the calendar then runs from the vessel's build year. */
@@ -39,6 +62,7 @@ export const fitPartSchema = z.strictObject({
   lowerTerminal: partFields.lowerTerminal.default('unknown'),
   threadSize: partFields.threadSize.default(null),
   pinDiameterMm: partFields.pinDiameterMm.default(null),
+  hardware: partFields.hardware.default(null),
   batch: partFields.batch.default(''),
   certificate: partFields.certificate.default(''),
   fittedOn: partFields.fittedOn.default(null),
