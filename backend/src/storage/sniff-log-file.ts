@@ -1,5 +1,6 @@
 import { createGunzip } from 'node:zlib';
 import type { Readable } from 'node:stream';
+import { firstBinaryByte } from '@stayledger/shared/fatigue/load-history/first-binary-byte';
 
 const HEAD_BYTES = 64 * 1024;
 
@@ -36,12 +37,13 @@ function refusalOf(head: Buffer): SniffedFile | null {
   if (utf16) {
     return { kind: 'other', refusal: 'The text is stored as UTF-16. Save it as UTF-8 and upload it again.' };
   }
-  const nul = head.indexOf(0);
-  if (nul >= 0) {
-    const line = head.subarray(0, nul).filter((byte) => byte === 0x0a).length + 1;
+  const binary = firstBinaryByte(head);
+  if (binary >= 0) {
+    const line = head.subarray(0, binary).filter((byte) => byte === 0x0a).length + 1;
+    const what = head[binary] === 0 ? 'a NUL byte' : 'control characters';
     return {
       kind: 'other',
-      refusal: `Line ${line} holds a NUL byte, so this is not plain text. Export the log as .csv or .csv.gz.`,
+      refusal: `Line ${line} holds ${what}, so this is not plain text. Export the log as .csv or .csv.gz.`,
     };
   }
   const first = head.toString('latin1', 0, 1);

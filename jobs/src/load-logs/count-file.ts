@@ -1,10 +1,12 @@
 import { closeSync, createReadStream, openSync, readSync, statSync } from 'node:fs';
 import { createGunzip } from 'node:zlib';
 import { type LoadLogConfig, LogConfigError } from '@stayledger/shared/fatigue/load-history/load-log';
+import { isReadableInstant } from '@stayledger/shared/fatigue/load-history/readable-instant';
 import { LoadLogCounter } from '@stayledger/shared/fatigue/load-history/load-log-counter';
 import type { LoadLogResult } from '@stayledger/shared/fatigue/load-history/load-log';
 import { BadFileError } from './bad-file-error.js';
-import { RawBytesGuard } from './raw-bytes-guard.js';
+import { placeInText } from './place-in-text.js';
+import { BadBytesError, RawBytesGuard } from './raw-bytes-guard.js';
 
 const BUFFER_BYTES = 256 * 1024;
 /**
@@ -34,13 +36,14 @@ export async function countFile(
     else readPlain(path, counter, onProgress);
     return checked(counter.finish());
   } catch (error) {
+    if (error instanceof BadBytesError) throw await withPlace(error, path, config.delimiter ?? ',');
     if (error instanceof LogConfigError) throw new BadFileError('cannot-be-read-so', sentence(error.message));
     throw error;
   }
 }
 
 function readPlain(path: string, counter: LoadLogCounter, onProgress: (bytesRead: number) => void): void {
-  const guard = new RawBytesGuard(counter);
+  const guard = new RawBytesGuard();
   const buffer = new Uint8Array(BUFFER_BYTES);
   const file = openSync(path, 'r');
   try {
@@ -64,7 +67,7 @@ async function readPacked(
   counter: LoadLogCounter,
   onProgress: (bytesRead: number) => void,
 ): Promise<void> {
-  const guard = new RawBytesGuard(counter);
+  const guard = new RawBytesGuard();
   const source = createReadStream(path, { highWaterMark: BUFFER_BYTES });
   const gunzip = createGunzip({ chunkSize: BUFFER_BYTES });
   source.on('error', (error) => gunzip.destroy(error));
@@ -84,26 +87,46 @@ async function readPacked(
       onProgress(source.bytesRead);
     }
   } catch (error) {
-    throw unpackingFault(error, counter.rows) ?? error;
+    throw unpackingFault(error, unpacked) ?? error;
   } finally {
     source.destroy();
     gunzip.destroy();
   }
 }
 
+/** The same fault with the line and cell it is in. */
+async function withPlace(error: BadBytesError, path: string, delimiter: string): Promise<BadFileError> {
+  const source = createReadStream(path, { highWaterMark: BUFFER_BYTES });
+  const text = isGzip(path) ? source.pipe(createGunzip({ chunkSize: BUFFER_BYTES })) : source;
+  source.on('error', (fault) => text.destroy(fault));
+  try {
+    const { line, cell } = await placeInText(text as AsyncIterable<Buffer>, error.atByte, delimiter);
+    return new BadFileError(error.code, `Line ${line}, cell ${cell}: ${lowerFirst(error.message)}`);
+  } finally {
+    source.destroy();
+    text.destroy();
+  }
+}
+
+function lowerFirst(text: string): string {
+  return text.charAt(0).toLowerCase() + text.slice(1);
+}
+
 /** What zlib says of a damaged file, in words; null for any other fault. */
-function unpackingFault(error: unknown, rows: number): BadFileError | null {
+function unpackingFault(error: unknown, unpacked: number): BadBytesError | null {
   const code = typeof error === 'object' && error !== null && 'code' in error ? error.code : undefined;
   switch (code) {
     case 'Z_BUF_ERROR':
-      return new BadFileError(
+      return new BadBytesError(
         'cut-short',
-        `The packed file ends too early, after ${rows} rows. It was probably cut while it was copied: copy it again and upload it anew.`,
+        unpacked,
+        'Here the packed file ends too early. It was probably cut while it was copied: copy it again and upload it anew.',
       );
     case 'Z_DATA_ERROR':
-      return new BadFileError(
+      return new BadBytesError(
         'damaged',
-        `The packed file is damaged after ${rows} rows. Pack the log again and upload it anew.`,
+        unpacked,
+        'The packed file is damaged from here on. Pack the log again and upload it anew.',
       );
     default:
       return null;
@@ -121,6 +144,12 @@ function checked(result: LoadLogResult): LoadLogResult {
     throw new BadFileError(
       'no-times',
       'No row has a readable time. Choose another time column or format, or state the rate.',
+    );
+  }
+  if (!isReadableInstant(result.fromMs) || !isReadableInstant(result.toMs)) {
+    throw new BadFileError(
+      'times-out-of-range',
+      `At the stated start and rate the ${result.rows} rows would lie outside the years 1900 to 2199. Check both.`,
     );
   }
   if (result.channels.every(({ samples }) => samples === 0)) {

@@ -1,5 +1,3 @@
-import { BadFileError } from './bad-file-error.js';
-
 const NUL = 0;
 const LF = 10;
 const CR = 13;
@@ -8,32 +6,48 @@ const LINE_BYTES_MAX = 1024 ** 2;
 const COLUMNS_MAX = 2000;
 const DELIMITERS = [',', ';', '\t', '|'].map((delimiter) => delimiter.charCodeAt(0));
 
+/** Bytes that no log holds, and where: counted from the first unpacked byte. */
+export class BadBytesError extends Error {
+  override readonly name = 'BadBytesError';
+
+  constructor(
+    readonly code: string,
+    readonly atByte: number,
+    message: string,
+  ) {
+    super(message);
+  }
+}
+
 /**
  * Looks at the bytes of a log before they are read: refuses what is no text, lines without end, and tables that are
  * absurdly wide, all of which would take memory or time without ever becoming a count.
  */
 export class RawBytesGuard {
+  /** Bytes seen so far. */
+  seen = 0;
   private sinceLineEnd = 0;
   private firstLine: number[] | null = [0, 0, 0, 0];
 
-  /** @param rows how many rows were read so far, to say where */
-  constructor(private readonly progress: { readonly rows: number }) {}
-
-  /** @throws BadFileError */
+  /** @throws BadBytesError */
   check(chunk: Uint8Array): void {
-    if (chunk.includes(NUL)) {
-      throw new BadFileError(
+    const nul = chunk.indexOf(NUL);
+    if (nul >= 0) {
+      throw new BadBytesError(
         'not-text',
-        `${this.place()} there is a NUL byte, so this is not plain text. Export the log as .csv or .csv.gz.`,
+        this.seen + nul,
+        'There is a NUL byte, so this is not plain text. Export the log as .csv or .csv.gz.',
       );
     }
     if (this.firstLine) this.checkWidth(chunk, this.firstLine);
     const lastEnd = Math.max(chunk.lastIndexOf(LF), chunk.lastIndexOf(CR));
     this.sinceLineEnd = lastEnd < 0 ? this.sinceLineEnd + chunk.length : chunk.length - 1 - lastEnd;
+    this.seen += chunk.length;
     if (this.sinceLineEnd > LINE_BYTES_MAX) {
-      throw new BadFileError(
+      throw new BadBytesError(
         'line-too-long',
-        `${this.place()} a line is longer than 1 MiB; a quotation mark may be missing its partner. Export the log again.`,
+        this.seen - this.sinceLineEnd,
+        'Here begins a line longer than 1 MiB; a quotation mark may be missing its partner. Export the log again.',
       );
     }
   }
@@ -46,16 +60,12 @@ export class RawBytesGuard {
       }
       const delimiter = DELIMITERS.indexOf(byte);
       if (delimiter >= 0 && ++counts[delimiter] >= COLUMNS_MAX) {
-        throw new BadFileError(
+        throw new BadBytesError(
           'too-many-columns',
-          `Line 1 has more than ${COLUMNS_MAX} columns. Export the time and the load columns only.`,
+          0,
+          `This line has more than ${COLUMNS_MAX} columns. Export the time and the load columns only.`,
         );
       }
     }
-  }
-
-  private place(): string {
-    const { rows } = this.progress;
-    return rows === 0 ? 'Near the beginning' : `After about ${rows} rows`;
   }
 }

@@ -16,6 +16,9 @@ export type LoadLogState = (typeof LOAD_LOG_STATES)[number];
 
 export const LOAD_UNITS = ['kN', 'N', 'kgf', 'daN', 'lbf', 'tf'] as const;
 
+/** Slower than this, rows are no record of loads, and a long file would end in a far century. */
+export const LOG_RATE_MIN_HZ = 0.0001;
+
 /** How the file is to be read: which column is the time, which columns are loads of which positions. */
 export const logMappingSchema = z.strictObject({
   delimiter: z.enum([',', ';', '\t', '|', ' ']).default(','),
@@ -27,7 +30,10 @@ export const logMappingSchema = z.strictObject({
       /** For ISO times without an offset: minutes east of UTC. */
       naiveOffsetMinutes: z.int().min(-720).max(840).default(0),
     }),
-    z.strictObject({ rateHz: z.number().positive().max(100_000), startAt: instantSchema }),
+    z.strictObject({
+      rateHz: z.number().min(LOG_RATE_MIN_HZ, 'At least one row in three hours.').max(100_000),
+      startAt: instantSchema,
+    }),
   ]),
   channels: z
     .array(

@@ -2,6 +2,7 @@ import { logText } from './log-text.js';
 import type { LogTimeFormat } from './load-log.js';
 import { LARGEST_READABLE_LOAD, parseLoadText } from './parse-load-text.js';
 import { dateToMs, parseTimeText } from './parse-time-text.js';
+import { isReadableInstant } from './readable-instant.js';
 
 /** Rows handed over at once: 32 KiB a column, which stays in the nearest cache while it is counted. */
 export const BLOCK_ROWS = 4096;
@@ -443,7 +444,7 @@ export class CsvScanner {
     if (!this.quotedCell(bytes, from, end)) return false;
     if (time.format !== 'iso' && this.manyDigits(bytes, from)) {
       if (time.format === 'epoch-s') this.cellValue *= 1000;
-      return true;
+      if (isReadableInstant(this.cellValue)) return true;
     }
     const text = this.cellText(bytes, from);
     const parsed = parseTimeText(text, time.format);
@@ -521,7 +522,7 @@ export class CsvScanner {
       return value;
     };
     const dateMs = dateToMs(digits(0, 4), digits(5, 2), digits(8, 2));
-    if (dateMs === null) return false;
+    if (dateMs === null || !isReadableInstant(dateMs)) return false;
     this.date.set(bytes.subarray(from, from + 10));
     this.dateMs = dateMs;
     return true;

@@ -16,6 +16,7 @@ import {
   type LoadLogResult,
 } from './load-log.js';
 import { resolveLayout, type ResolvedLayout } from './resolve-layout.js';
+import { isReadableInstant } from './readable-instant.js';
 import { RECOGNITION_BYTES } from './recognise-log.js';
 import { RowClock } from './row-clock.js';
 import { SignalWatch } from './signal-watch.js';
@@ -95,8 +96,8 @@ function checkConfig({ channels, time, gapLimitS, delimiter }: LoadLogConfig): v
     if (!(time.rateHz > 0) || !Number.isFinite(time.rateHz)) {
       throw new LogConfigError('the rate must be a positive number of rows per second');
     }
-    if (time.startAt !== undefined && Number.isNaN(Date.parse(time.startAt))) {
-      throw new LogConfigError(`the start "${time.startAt}" is no instant`);
+    if (time.startAt !== undefined && !isReadableInstant(Date.parse(time.startAt))) {
+      throw new LogConfigError(`the start "${time.startAt}" is no instant between 1900 and 2199`);
     }
   }
   if (gapLimitS !== undefined && !(gapLimitS > 0))

@@ -1,4 +1,5 @@
 import type { LogTimeFormat } from './load-log.js';
+import { isReadableInstant } from './readable-instant.js';
 
 const ISO =
   /^([+-]?\d{4})([-/])(\d{2})\2(\d{2})[T ](\d{2}):(\d{2})(?::(\d{2})(?:[.,](\d+))?)?\s*(Z|z|UTC|[+-]\d{2}(?::?\d{2})?)?$/;
@@ -15,7 +16,8 @@ export interface ParsedTime {
  * @param text the cell, quotes removed: ISO 8601 (date and time with `T` or a blank, seconds and fraction
  *   optional, `Z`, an offset or neither), or seconds or milliseconds since 1970
  * @param format how it is written
- * @returns epoch milliseconds, an ISO time without offset read as UTC; `null` when it is no such time
+ * @returns epoch milliseconds, an ISO time without offset read as UTC; `null` when it is no such time, or one that no
+ *   recorder can have written (`isReadableInstant`)
  */
 export function parseTimeText(text: string, format: LogTimeFormat): ParsedTime | null {
   const trimmed = text.trim();
@@ -23,14 +25,15 @@ export function parseTimeText(text: string, format: LogTimeFormat): ParsedTime |
     const dotted = trimmed.replace(',', '.');
     if (!/^-?\d+(?:\.\d*)?(?:[eE]\+?\d+)?$/.test(dotted)) return null;
     const ms = Number(dotted) * (format === 'epoch-s' ? 1000 : 1);
-    return Math.abs(ms) <= 8.64e15 ? { ms, hasOffset: true } : null;
+    return isReadableInstant(ms) ? { ms, hasOffset: true } : null;
   }
   const parts = ISO.exec(trimmed);
   if (parts === null) return null;
   const [, year, , month, day, hour, minute, second = '0', fraction = '', offset] = parts;
   const dateMs = dateToMs(Number(year), Number(month), Number(day));
   // 24:00 is the end of a day, and a leap second is read as the second after it.
-  if (dateMs === null || Number(hour) > 24 || Number(minute) > 59 || Number(second) > 60) return null;
+  if (dateMs === null || !isReadableInstant(dateMs)) return null;
+  if (Number(hour) > 24 || Number(minute) > 59 || Number(second) > 60) return null;
   if (Number(hour) === 24 && (Number(minute) > 0 || Number(second) > 0)) return null;
   const wholeSeconds = (Number(hour) * 60 + Number(minute)) * 60 + Number(second);
   let ms = dateMs + wholeSeconds * 1000;

@@ -1,4 +1,5 @@
 import type { ForceUnit } from '../../units/force.js';
+import { firstBinaryByte } from './first-binary-byte.js';
 import type { LogTimeFormat } from './load-log.js';
 import { logText } from './log-text.js';
 import { parseLoadText } from './parse-load-text.js';
@@ -150,9 +151,10 @@ function notText(head: Uint8Array): LogProblem | null {
       line: 1,
     };
   }
-  const nul = head.indexOf(0);
-  if (nul < 0) return null;
-  return { code: 'not-text', message: `The file is not a text table: byte ${nul + 1} is zero.`, line: 1 };
+  const at = firstBinaryByte(head);
+  if (at < 0) return null;
+  const what = head[at] === 0 ? 'is zero' : 'is a control character, as are many others';
+  return { code: 'not-text', message: `The file is not a text table: byte ${at + 1} ${what}.`, line: 1 };
 }
 
 interface Table {

@@ -44,6 +44,8 @@ export function resolveLayout(head: Uint8Array, config: LoadLogConfig): Resolved
   const channelPlaces: number[] = [];
   const otherUnit = new Map<number, string>();
   const averaged: number[] = [];
+  const otherDelimiter = delimiterThatWouldFit(head, config, columns);
+  if (otherDelimiter !== null) throw new LogConfigError(otherDelimiter);
   config.channels.forEach(({ column, unit }, channel) => {
     const { index, header } = columnNamed(columns, column);
     if (!places.includes(index)) places.push(index);
@@ -84,6 +86,8 @@ export function resolveLayout(head: Uint8Array, config: LoadLogConfig): Resolved
 
 interface NamedTable {
   columns: RecognisedColumn[];
+  /** Line of the names, counted from 1. */
+  headerLine: number;
   delimiter: string;
   /** Physical lines above the first row. */
   skipLines: number;
@@ -109,22 +113,69 @@ function tableWith(head: Uint8Array, recognition: LogRecognition, config: LoadLo
       const below = i + 1 < lines.length ? splitTableLine(lines[i + 1], delimiter) : [];
       const filled = below.filter((cell) => cell !== '');
       const first = filled.length > 0 && looksLikeUnits(filled) ? i + 2 : i + 1;
-      return { columns, delimiter, skipLines: lineNumbers[first] - 1 };
+      return { columns, headerLine: lineNumbers[i], delimiter, skipLines: lineNumbers[first] - 1 };
     }
   }
-  const { columns, delimiter, firstRowLine } = recognition;
-  return { columns, delimiter, skipLines: firstRowLine - 1 };
+  const { columns, headerLine, delimiter, firstRowLine } = recognition;
+  return { columns, headerLine, delimiter, skipLines: firstRowLine - 1 };
 }
 
 function columnNamed(columns: RecognisedColumn[], name: string): RecognisedColumn {
   const found = columnsNamed(columns, name);
   if (found.length === 0) {
-    const known = columns.map(({ header }) => `"${header}"`).join(', ');
-    throw new LogConfigError(`the log has no column "${name}"; it has ${known === '' ? 'none' : known}`);
+    throw new LogConfigError(
+      `the log has no column ${quoted(name)}; it has ${listed(columns)}. Match the columns anew, or export the log with that column`,
+    );
   }
   if (found.length > 1) {
     const places = found.map(({ index }) => index + 1).join(' and ');
-    throw new LogConfigError(`the log has the column "${name}" twice, as columns ${places}`);
+    throw new LogConfigError(
+      `the log has the column ${quoted(name)} twice, as columns ${places}. Give each its own name in the header and add the log again`,
+    );
   }
   return found[0];
+}
+
+const NAMES_LISTED = 12;
+const NAME_LENGTH = 40;
+
+/** The names a table has, few and short enough for one sentence whatever the file holds. */
+function listed(columns: readonly RecognisedColumn[]): string {
+  if (columns.length === 0) return 'none';
+  const names = columns.slice(0, NAMES_LISTED).map(({ header }) => quoted(header));
+  const more = columns.length - names.length;
+  return names.join(', ') + (more > 0 ? ` and ${more} more` : '');
+}
+
+function quoted(name: string): string {
+  const shown = name.replace(/\p{Cc}/gu, '\u{fffd}');
+  return `"${shown.length > NAME_LENGTH ? `${shown.slice(0, NAME_LENGTH)}…` : shown}"`;
+}
+
+const DELIMITER_WORDS: Readonly<Record<string, string>> = {
+  ',': 'commas',
+  ';': 'semicolons',
+  '\t': 'tabs',
+  '|': 'bars',
+  ' ': 'blanks',
+};
+
+/** What to say when a wanted column is missing only because cells were parted at the wrong character; else null. */
+function delimiterThatWouldFit(
+  head: Uint8Array,
+  config: LoadLogConfig,
+  columns: RecognisedColumn[],
+): string | null {
+  const chosen = config.delimiter;
+  if (chosen === undefined) return null;
+  const wanted = config.channels.map(({ column }) => column);
+  if (wanted.every((name) => columnsNamed(columns, name).length > 0)) return null;
+  for (const delimiter of DELIMITERS) {
+    if (delimiter === chosen) continue;
+    const other = tableWith(head, recogniseLog(head, { ...config, delimiter }), { ...config, delimiter });
+    if (!wanted.every((name) => columnsNamed(other.columns, name).length > 0)) continue;
+    const words = (character: string) => DELIMITER_WORDS[character] ?? `"${character}"`;
+    return `the cells of line ${other.headerLine} are parted by ${words(delimiter)}, not by ${words(chosen)}. Choose that separator`;
+  }
+  return null;
 }
