@@ -10,6 +10,7 @@ import { jsonOnly } from './common/http/json-only.js';
 import { mountOpenApi } from './common/http/openapi.js';
 import { requestContext } from './common/http/request-context.js';
 import { securityHeaders } from './common/http/security-headers.js';
+import { storableText } from './common/http/storable-text.js';
 import { webApp } from './common/http/web-app.js';
 import { AppLogger } from './common/logging/app-logger.js';
 import { ENV } from './config/config.module.js';
@@ -50,7 +51,7 @@ export function configureApp(
   app.use(securityHeaders(env.PUBLIC_URL?.startsWith('https:') ?? false));
   app.use('/api', neverStored, ...sessions.handlers, refuseCrossSite(env.PUBLIC_URL));
   app.use(UPLOADS_PATH, app.get(UploadsHandler).handle);
-  app.use('/api', jsonOnly, express.json({ limit: BODY_LIMIT }));
+  app.use('/api', jsonOnly, express.json({ limit: BODY_LIMIT }), storableText);
   mountOpenApi(app);
   app.use(webApp(webAppFolder));
   return app;
