@@ -4,11 +4,14 @@ import { mkdtemp, rm } from 'node:fs/promises';
 import { createServer } from 'node:net';
 import { tmpdir } from 'node:os';
 import { join } from 'node:path';
+import { Redis } from 'ioredis';
 
 /** A real Redis server that lives as long as a test file. */
 export interface TestRedisServer {
   readonly url: string;
   readonly process: ChildProcess;
+  /** Forgets everything, as a server without a disk does when it is started anew. */
+  flushAll(): Promise<void>;
   stop(): Promise<void>;
 }
 
@@ -29,12 +32,16 @@ function freePort(): Promise<number> {
   });
 }
 
-/** Starts a Redis server on a free loopback port, in memory only, in a folder of its own. */
-export async function startRedisServer(): Promise<TestRedisServer> {
+/**
+ * Starts a Redis server on loopback, in memory only, in a folder of its own.
+ *
+ * @param wantedPort where an earlier one was, to take its place; else a free one
+ */
+export async function startRedisServer(wantedPort?: number): Promise<TestRedisServer> {
   const program = PROGRAMS.find(existsSync);
   if (!program) throw new Error('These tests need a Redis server: install the package redis-tools.');
   const folder = await mkdtemp(join(tmpdir(), 'stayledger-redis-'));
-  const port = await freePort();
+  const port = wantedPort ?? (await freePort());
   const settings = [
     '--port',
     String(port),
@@ -72,6 +79,11 @@ export async function startRedisServer(): Promise<TestRedisServer> {
   return {
     url: `redis://127.0.0.1:${port}`,
     process: child,
+    async flushAll() {
+      const client = new Redis(port, '127.0.0.1');
+      await client.flushall();
+      client.disconnect();
+    },
     async stop() {
       child.kill('SIGKILL');
       await ended;

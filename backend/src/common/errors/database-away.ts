@@ -1,5 +1,9 @@
 import { ConnectionException } from '@mikro-orm/core';
 
+/** What the driver says without a code, when a connection was cut before or while a statement ran. */
+const DRIVER_WORDS =
+  /^(Connection terminated|Connection ended|timeout exceeded when trying to connect|Timeout acquiring a connection|Client has encountered a connection error|Client was closed)/;
+
 /**
  * Whether an error means that the database cannot be reached for the moment: SQLSTATE classes 08 (connection),
  * 53 (resources), 57P (shutting down), and what the driver says itself.
@@ -14,10 +18,7 @@ export function databaseIsAway(exception: unknown): boolean {
   ) {
     return true;
   }
-  return (
-    exception.name === 'KnexTimeoutError' ||
-    /^Connection terminated|timeout exceeded when trying to connect|Timeout acquiring a connection/.test(
-      exception.message,
-    )
-  );
+  // The query builder puts the statement before the driver's own words.
+  const words = exception.message.split(' - ').at(-1) ?? '';
+  return exception.name === 'KnexTimeoutError' || DRIVER_WORDS.test(words);
 }
