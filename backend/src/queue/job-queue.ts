@@ -2,7 +2,7 @@ import { EventSubscriber, type Transaction, type TransactionEventArgs } from '@m
 import { EntityManager } from '@mikro-orm/postgresql';
 import { InjectQueue } from '@nestjs/bull';
 import { Injectable, Logger } from '@nestjs/common';
-import { COUNT_LOAD_LOG, type JobPayload, LOAD_LOGS_QUEUE } from '@stayledger/shared/queues/load-logs.queue';
+import { type JobKind, type JobPayload, LOAD_LOGS_QUEUE } from '@stayledger/shared/queues/load-logs.queue';
 import type { Queue } from 'bull';
 import { Clock } from '../common/clock/clock.js';
 import { newId } from '../common/ids/new-id.js';
@@ -10,7 +10,7 @@ import { Job } from '../jobs/job.entity.js';
 
 /** Work to be done in the background, named by what it is about and which version of its input it works on. */
 export interface NewJob {
-  kind: typeof COUNT_LOAD_LOG;
+  kind: JobKind;
   subjectId: string;
   vesselId: string;
   inputVersion: number;
@@ -23,7 +23,7 @@ export interface NewJob {
 @Injectable()
 export class JobQueue implements EventSubscriber {
   private readonly logger = new Logger(JobQueue.name);
-  private readonly waiting = new WeakMap<object, string[]>();
+  private readonly waiting = new WeakMap<object, { id: string; kind: JobKind }[]>();
 
   constructor(
     @InjectQueue(LOAD_LOGS_QUEUE) private readonly queue: Queue<JobPayload>,
@@ -46,19 +46,22 @@ export class JobQueue implements EventSubscriber {
     await em.persist(job).flush();
     const transaction = em.getTransactionContext<Transaction & object>();
     if (transaction === undefined) throw new Error('A job is announced within the transaction that needs it');
-    this.waiting.set(transaction, [...(this.waiting.get(transaction) ?? []), job.id]);
+    this.waiting.set(transaction, [
+      ...(this.waiting.get(transaction) ?? []),
+      { id: job.id, kind: work.kind },
+    ]);
     return job;
   }
 
   afterTransactionCommit({ transaction }: TransactionEventArgs): void {
-    const ids = transaction ? this.waiting.get(transaction as object) : undefined;
-    for (const id of ids ?? []) void this.wake(id);
+    const jobs = transaction ? this.waiting.get(transaction as object) : undefined;
+    for (const { id, kind } of jobs ?? []) void this.wake(id, kind);
   }
 
   /** Tells a worker that a row waits. Never fails: the sweep tells again. */
-  async wake(jobId: string): Promise<void> {
+  async wake(jobId: string, kind: JobKind): Promise<void> {
     try {
-      await this.queue.add(COUNT_LOAD_LOG, { jobId }, { jobId });
+      await this.queue.add(kind, { jobId }, { jobId });
     } catch (error) {
       const reason = error instanceof Error ? error.message : String(error);
       this.logger.warn(`the queue is not reachable, the sweep will find job ${jobId}: ${reason}`);

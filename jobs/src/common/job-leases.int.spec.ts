@@ -53,6 +53,8 @@ function deps(pool: Pick<CountingPool, 'count'> = app.nest.get(CountingPool)) {
   };
 }
 
+const idsOf = (jobs: readonly { id: string }[]): string[] => jobs.map(({ id }) => id);
+
 /** A counted log whose job is put back as if a worker had died over it; nobody else touches it meanwhile. */
 async function abandonedJob(start: string): Promise<{ jobId: string; loadLogId: string }> {
   const log = await uploadLog(logged, swingingCsv({ start, hours: 1, lowKn: 2, highKn: 9 }));
@@ -81,7 +83,7 @@ describe('leases', () => {
   it('are held by one worker at a time', async () => {
     const { jobId } = await abandonedJob('2026-06-01T06:00:00Z');
     expect(await claimJob(em(), jobId)).toBeNull();
-    expect(await waitingJobs(em())).not.toContain(jobId);
+    expect(idsOf(await waitingJobs(em()))).not.toContain(jobId);
     await expireLease(jobId);
     const claims = await Promise.all([claimJob(em(), jobId), claimJob(em(), jobId), claimJob(em(), jobId)]);
     const held = claims.filter((claim): claim is HeldJob => claim !== null);
@@ -172,7 +174,7 @@ describe('leases', () => {
 describe('a process that is the only one', () => {
   it('goes on at once with what its predecessor held', async () => {
     const { jobId, loadLogId } = await abandonedJob('2026-06-10T06:00:00Z');
-    expect(await waitingJobs(em())).not.toContain(jobId);
+    expect(idsOf(await waitingJobs(em()))).not.toContain(jobId);
     await takeBackLeases(em());
     await app.nest.get(JobSweep).sweep();
     expect((await settled(logged.agent, loadLogId)).state).toBe('counted');
@@ -231,9 +233,9 @@ describe('the sweep', () => {
       counts: true,
       failure: { code: 'broke-off', message: 'Later.' },
     });
-    expect(await waitingJobs(em())).not.toContain(jobId);
+    expect(idsOf(await waitingJobs(em()))).not.toContain(jobId);
     await pause(1100);
-    expect(await waitingJobs(em())).toContain(jobId);
+    expect(idsOf(await waitingJobs(em()))).toContain(jobId);
     await endJob(em(), (await claimJob(em(), jobId)) ?? held, 'cancelled');
   });
 

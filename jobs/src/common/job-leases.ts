@@ -1,5 +1,6 @@
 import type { EntityManager } from '@mikro-orm/postgresql';
 import { newId } from '@stayledger/backend/persistence';
+import type { JobKind } from '@stayledger/shared/queues/load-logs.queue';
 
 /** A job this process holds. Every write about it names the token, so that whoever lost the lease cannot write. */
 export interface HeldJob {
@@ -130,14 +131,19 @@ export async function takeBackLeases(em: EntityManager): Promise<void> {
   await em.execute(`update job set lease_until = null, lease_token = null where state = 'running'`);
 }
 
+/** A job nobody was woken for yet, or not to any avail. */
+export interface WaitingJob {
+  id: string;
+  kind: JobKind;
+}
+
 /** Jobs that wait and that nobody holds. */
-export async function waitingJobs(em: EntityManager): Promise<string[]> {
-  const rows = await em.execute<{ id: string }[]>(
-    `select id from job
+export async function waitingJobs(em: EntityManager): Promise<WaitingJob[]> {
+  return em.execute<WaitingJob[]>(
+    `select id, kind from job
       where state in ('queued', 'running') and (lease_until is null or lease_until < clock_timestamp())
       order by created_at limit 200`,
   );
-  return rows.map(({ id }) => id);
 }
 
 async function change(em: EntityManager, job: HeldJob, set: string, values: unknown[]): Promise<void> {

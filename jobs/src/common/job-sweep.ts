@@ -47,6 +47,6 @@ export class JobSweep implements OnApplicationBootstrap, BeforeApplicationShutdo
   }
 
   private async sweepOnce(): Promise<void> {
-    for (const jobId of await waitingJobs(this.em.fork())) await this.queue.wake(jobId);
+    for (const { id, kind } of await waitingJobs(this.em.fork())) await this.queue.wake(id, kind);
   }
 }
