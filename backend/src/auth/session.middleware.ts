@@ -1,11 +1,12 @@
 import { Inject, Injectable, type OnApplicationShutdown } from '@nestjs/common';
-import connectPgSimple from 'connect-pg-simple';
 import type { RequestHandler } from 'express';
 import session from 'express-session';
 import passport from 'passport';
 import { Pool } from 'pg';
+import { Clock } from '../common/clock/clock.js';
 import { ENV } from '../config/config.module.js';
 import type { Env } from '../config/env.js';
+import { SessionStore } from './session-store.js';
 
 /** Signed out after this long without a request. */
 const IDLE_LIMIT_MS = 8 * 3_600_000;
@@ -17,7 +18,7 @@ export class SessionMiddleware implements OnApplicationShutdown {
   readonly pool: Pool;
   readonly handlers: RequestHandler[];
 
-  constructor(@Inject(ENV) env: Env) {
+  constructor(@Inject(ENV) env: Env, clock: Clock) {
     const tls = env.PUBLIC_URL?.startsWith('https:') ?? false;
     // The prefix promises "only over TLS, only this host". Plain loopback cannot keep it; there the port keeps two
     // services apart, since cookies ignore ports.
@@ -31,17 +32,11 @@ export class SessionMiddleware implements OnApplicationShutdown {
     });
     // Without a listener, a connection that PostgreSQL ends while idle would end the process.
     this.pool.on('error', () => undefined);
-    const Store = connectPgSimple(session);
     this.handlers = [
       session({
         name: this.cookieName,
         secret: env.SESSION_SECRET,
-        store: new Store({
-          pool: this.pool,
-          tableName: 'session',
-          createTableIfMissing: false,
-          pruneSessionInterval: false,
-        }),
+        store: new SessionStore(this.pool, clock, IDLE_LIMIT_MS),
         resave: false,
         saveUninitialized: false,
         rolling: true,
