@@ -7,6 +7,8 @@ import { QueryView } from '../../components/feedback/query-view';
 import { ButtonLink } from '../../components/plain-button/plain-button';
 import { CsvDownload } from '../../components/tables/csv-download';
 import { DataTable } from '../../components/tables/data-table';
+import { drawnRig } from '../../features/rig/drawn-rig';
+import { RigElevation } from '../../features/rig/rig-elevation';
 import { rigColumns } from '../../features/rig/rig-table.columns';
 import { rigQueries } from '../../features/rig/rig.queries';
 import styles from '../../features/rig/rig.module.css';
@@ -40,6 +42,12 @@ export function VesselRigPage() {
         ) : (
           <>
             <p className={styles.summary}>{rigSummary(items)}</p>
+            <RigElevation
+              name={vessel.name}
+              rig={drawnRig(vessel, items)}
+              todayOn={todayOn}
+              zone={vessel.zone}
+            />
             <DataTable
               caption={`Positions and parts of ${vessel.name}`}
               stackOnPhone
