@@ -143,6 +143,7 @@ const BODIES: Record<string, (world: World) => object> = {
   }),
   'post /api/load-logs/{loadLogId}/post': () => ({ version: 1 }),
   'post /api/load-logs/{loadLogId}/set-aside': () => ({ version: 1, reason: 'A test' }),
+  'post /api/load-logs/{loadLogId}/reverse': () => ({ version: 1, reason: 'A test' }),
   'post /api/positions/{positionId}/parts': () => FIT,
   'patch /api/parts/{partId}': () => ({ version: 1, notes: 'Seen' }),
   'post /api/parts/{partId}/remove': () => ({ version: 1, removedOn: '2027-06-30', reason: 'A test' }),

@@ -8,7 +8,7 @@ import {
 import { ENGINE_VERSION } from '@stayledger/shared/fatigue/engine-version';
 import { Clock } from '../common/clock/clock.js';
 import { newId } from '../common/ids/new-id.js';
-import { type AssessedDetail, assessedDetailsOf } from '../life/detail-models.js';
+import { asStored, type AssessedDetail, assessedDetailsOf } from '../life/detail-models.js';
 import { PartDetail } from '../life/part-detail.entity.js';
 import { FittedPart } from '../parts/fitted-part.entity.js';
 import type { CanonicalValue } from './canonical-json.js';
@@ -27,6 +27,17 @@ interface Amount {
   basis: { [key: string]: CanonicalValue };
 }
 
+/** How the account of a detail differs from what it should hold. */
+export interface AccountDifference {
+  detail: PartDetail;
+  assessed: AssessedDetail | null;
+  /** All its entries, ascending. */
+  earlier: LedgerEntry[];
+  /** Standing entries that no longer hold. */
+  outdated: LedgerEntry[];
+  missing: Amount[];
+}
+
 /**
  * Keeps the accounts of fitted parts. Entries are only ever added: what no longer holds is reversed by a further entry
  * and written anew.
@@ -42,18 +53,44 @@ export class AccountService {
    * Brings the account of a part to what its posted logs and its details say, in the running transaction. Doing it
    * again changes nothing. The caller holds the row of the part locked.
    *
+   * @param why stands in every reversal this makes
    * @returns number of entries written
    */
-  async settle(em: EntityManager, part: FittedPart, userId: string | null): Promise<number> {
+  async settle(
+    em: EntityManager,
+    part: FittedPart,
+    userId: string | null,
+    why: string | null = null,
+  ): Promise<number> {
+    let written = 0;
+    for (const difference of await this.differences(em, part)) {
+      written += await this.settleDetail(em, difference, userId, why);
+    }
+    return written;
+  }
+
+  /** What would have to be reversed and written for the account of a part to say what its logs and details say. */
+  async differences(em: EntityManager, part: FittedPart): Promise<AccountDifference[]> {
     const logs = await this.history.logsOf(em, part);
     const assessed = new Map((await assessedDetailsOf(em, part.id)).map((one) => [one.detail.id, one]));
     const details = await em.find(PartDetail, { fittedPart: part.id }, { orderBy: { key: 'asc' } });
-    let written = 0;
+    const differences: AccountDifference[] = [];
     for (const detail of details) {
-      const one = assessed.get(detail.id);
-      written += await this.settleDetail(em, detail, one ?? null, one ? amountsOf(logs, one) : [], userId);
+      const one = assessed.get(detail.id) ?? null;
+      const earlier = await em.find(LedgerEntry, { partDetail: detail.id }, { orderBy: { sequence: 'asc' } });
+      const wanted = new Map(
+        (one ? amountsOf(logs, one) : []).map((amount) => [keyOf(amount.kind, amount.loadLogId), amount]),
+      );
+      const outdated = standingAmong(earlier).filter((entry) => {
+        const amount = wanted.get(keyOf(entry.kind, entry.loadLog));
+        if (!amount || !sameBasis(entry, amount)) return true;
+        wanted.delete(keyOf(entry.kind, entry.loadLog));
+        return false;
+      });
+      if (outdated.length === 0 && wanted.size === 0) continue;
+      differences.push({ detail, assessed: one, earlier, outdated, missing: [...wanted.values()] });
     }
-    return written;
+    return differences;
   }
 
   /** Design damage of each detail of a part by its standing entries; details without entries are left out. */
@@ -68,22 +105,10 @@ export class AccountService {
 
   private async settleDetail(
     em: EntityManager,
-    detail: PartDetail,
-    assessed: AssessedDetail | null,
-    amounts: Amount[],
+    { detail, assessed, earlier, outdated, missing }: AccountDifference,
     userId: string | null,
+    why: string | null,
   ): Promise<number> {
-    const earlier = await em.find(LedgerEntry, { partDetail: detail.id }, { orderBy: { sequence: 'asc' } });
-    const standing = standingAmong(earlier);
-    const wanted = new Map(amounts.map((amount) => [keyOf(amount.kind, amount.loadLogId), amount]));
-    const outdated = standing.filter((entry) => {
-      const amount = wanted.get(keyOf(entry.kind, entry.loadLog));
-      if (!amount || !sameBasis(entry, amount)) return true;
-      wanted.delete(keyOf(entry.kind, entry.loadLog));
-      return false;
-    });
-    if (outdated.length === 0 && wanted.size === 0) return 0;
-
     const chain = new Chain(detail, earlier.at(-1) ?? null);
     const postedAt = this.clock.now();
     for (const entry of outdated) {
@@ -93,12 +118,12 @@ export class AccountService {
         reversesId: entry.id,
         damage: 0 - entry.damage,
         curve: entry.curve,
-        basis: { reverses: entry.kind },
+        basis: { reverses: entry.kind, ...(why === null ? {} : { reason: why }) },
         postedAt,
         userId,
       });
     }
-    for (const amount of wanted.values()) {
+    for (const amount of missing) {
       if (assessed === null) throw new Error(`Detail ${detail.id} has amounts and no curve`);
       chain.add({
         kind: amount.kind,
@@ -126,12 +151,22 @@ export function standingAmong(entries: readonly LedgerEntry[]): LedgerEntry[] {
 /** The amounts of one detail after the given logs. */
 function amountsOf(logs: readonly LogOfPart[], { detail, model, modelSha256 }: AssessedDetail): Amount[] {
   if (logs.length === 0) return [];
-  const described = { detailVersion: detail.version, modelSha256 };
+  // The inputs themselves stand in the entry, so that its amount can be worked out again after the detail has changed.
+  const inputs = asStored(detail.model.inputs);
+  const described = { detailVersion: detail.version, modelSha256, inputs };
   const recorded = logs.map((log): Amount => ({
     kind: 'recorded',
     loadLogId: log.loadLogId,
     damage: () => recordedDamage(log, model).damage,
-    basis: { ...described, spectrumSha256: log.spectrumSha256, stepKn: log.stepKn },
+    basis: {
+      ...described,
+      logSha256: log.logSha256,
+      mappingVersion: log.mappingVersion,
+      column: log.columnName,
+      unit: log.unit,
+      spectrumSha256: log.spectrumSha256,
+      stepKn: log.stepKn,
+    },
   }));
   const spectra = logs.map((log) => log.spectrumSha256);
   return [

@@ -1,14 +1,16 @@
 import { EntityManager } from '@mikro-orm/postgresql';
 import { Injectable } from '@nestjs/common';
-import type { LedgerEntryDto } from '@stayledger/shared/contracts/ledger';
+import type { LedgerCheckDto, LedgerEntryDto } from '@stayledger/shared/contracts/ledger';
 import { idSchema } from '@stayledger/shared/contracts/values';
 import { z } from 'zod';
+import { AuditService } from '../audit/audit.service.js';
 import type { Principal } from '../auth/principal.js';
 import { decodeCursor, type Page, toPage } from '../common/pagination/cursor.js';
 import { PartDetail } from '../life/part-detail.entity.js';
 import { LoadLog } from '../load-logs/load-log.entity.js';
 import { User } from '../users/user.entity.js';
 import { VesselReach } from '../vessels/vessel-reach.service.js';
+import { LedgerCheck } from './ledger-check.js';
 import { LedgerEntry } from './ledger-entry.entity.js';
 
 const CURSOR = z.tuple([idSchema]);
@@ -19,7 +21,24 @@ export class LedgerService {
   constructor(
     private readonly em: EntityManager,
     private readonly reach: VesselReach,
+    private readonly checks: LedgerCheck,
+    private readonly audit: AuditService,
   ) {}
+
+  /** Checks the ledger of a vessel, and notes that somebody did and what came of it. */
+  async check(me: Principal, vesselId: string): Promise<LedgerCheckDto> {
+    const vessel = await this.reach.findOrFail(me, vesselId, 'ledger:check');
+    const check = await this.checks.ofVessel(this.em, vessel.id);
+    await this.audit.record(this.em, {
+      userId: me.userId,
+      vesselId: vessel.id,
+      action: 'ledger.checked',
+      subjectKind: 'vessel',
+      subjectId: vessel.id,
+      data: { entries: check.entries, differences: check.differences.length },
+    });
+    return check;
+  }
 
   /** All entries of a part, newest first. */
   async entries(
@@ -65,7 +84,13 @@ export class LedgerService {
         postedByName: users.find(({ id }) => id === entry.postedBy)?.name ?? null,
         postedAt: entry.postedAt.toISOString(),
         hash: entry.hash,
+        reason: reasonOf(entry),
       };
     });
   }
+}
+
+function reasonOf({ basis }: LedgerEntry): string | null {
+  const said = basis !== null && typeof basis === 'object' && 'reason' in basis ? basis.reason : null;
+  return typeof said === 'string' ? said : null;
 }

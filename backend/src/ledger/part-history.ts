@@ -15,8 +15,12 @@ export interface LogOfPart extends LogOfAccount {
   fromOn: string;
   toOn: string;
   loggedHours: number;
+  /** Of the file as it was received. */
+  logSha256: string | null;
+  mappingVersion: number;
   spectrumSha256: string;
   columnName: string;
+  unit: string;
   stepKn: number;
   maxKn: number | null;
 }
@@ -27,7 +31,10 @@ interface Row {
   from_at: Date;
   to_at: Date;
   logged_hours: number;
+  log_sha256: string | null;
+  mapping_version: number;
   column_name: string;
+  unit: string;
   step_kn: number;
   max_kn: number | null;
   data: Buffer;
@@ -53,7 +60,7 @@ export class PartHistory {
     const stretch = await this.stretchOf(em, part);
     const rows = await em.execute<Row[]>(
       `select l.id as load_log_id, l.file_name, l.from_at, l.to_at, l.logged_hours,
-              c.column_name, c.step_kn, c.max_kn, s.data, s.sha256
+              l.sha256 as log_sha256, l.mapping_version, c.column_name, c.unit, c.step_kn, c.max_kn, s.data, s.sha256
          from load_log l
          join log_channel c on c.load_log_id = l.id and c.mapping_version = l.mapping_version
                            and c.engine_version = l.engine_version
@@ -102,7 +109,10 @@ function logOf(row: Row, zone: string): LogOfPart {
     fromOn: dayIn(fromAt, zone),
     toOn: dayIn(toAt, zone),
     loggedHours: row.logged_hours,
+    logSha256: row.log_sha256,
+    mappingVersion: row.mapping_version,
     columnName: row.column_name,
+    unit: row.unit,
     stepKn: row.step_kn,
     maxKn: row.max_kn,
     spectrum: decodeSpectrum(row.data),

@@ -37,9 +37,15 @@ export async function assessedDetailsOf(em: EntityManager, partId: string): Prom
 }
 
 function hashOf(detail: PartDetail): string {
-  // Through JSON once, so that what is hashed is what the row holds.
-  const said = JSON.parse(
-    JSON.stringify({ curve: detail.curve, inputs: detail.model.inputs }),
-  ) as CanonicalValue;
-  return createHash('sha256').update(canonicalJson(said)).digest('hex');
+  return modelSha256Of(detail.curve, asStored(detail.model.inputs));
+}
+
+/** Names a curve in its version and the inputs put to it. */
+export function modelSha256Of(curve: [string, number] | null, inputs: CanonicalValue): string {
+  return createHash('sha256').update(canonicalJson({ curve, inputs })).digest('hex');
+}
+
+/** Through JSON once, so that what is hashed is what a row holds. */
+export function asStored(value: unknown): CanonicalValue {
+  return JSON.parse(JSON.stringify(value)) as CanonicalValue;
 }

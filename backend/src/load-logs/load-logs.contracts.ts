@@ -6,6 +6,7 @@ import {
   postLoadLogSchema,
   recountLoadLogSchema,
   rememberedMappingsSchema,
+  reverseLoadLogSchema,
   setAsideLoadLogSchema,
 } from '@stayledger/shared/contracts/load-logs';
 import { pageQuerySchema } from '@stayledger/shared/contracts/pagination';
@@ -20,6 +21,7 @@ export class CreateLoadLogBody extends createZodDto(createLoadLogSchema) {}
 export class RecountLoadLogBody extends createZodDto(recountLoadLogSchema) {}
 export class PostLoadLogBody extends createZodDto(postLoadLogSchema) {}
 export class SetAsideLoadLogBody extends createZodDto(setAsideLoadLogSchema) {}
+export class ReverseLoadLogBody extends createZodDto(reverseLoadLogSchema) {}
 export class LoadLogsQuery extends createZodDto(pageQuerySchema) {}
 export class LoadLogReply extends createZodDto(loadLogSchema) {}
 export class LoadLogPageReply extends createZodDto(loadLogPageSchema) {}

@@ -28,6 +28,7 @@ import {
   PostLoadLogBody,
   RecountLoadLogBody,
   RememberedMappingsReply,
+  ReverseLoadLogBody,
   SetAsideLoadLogBody,
   VesselParams,
 } from './load-logs.contracts.js';
@@ -105,6 +106,15 @@ export class LoadLogsController {
   @ZodResponse({ type: LoadLogReply, status: 200 })
   setAside(@Me() me: Principal, @Param() { loadLogId }: LoadLogParams, @Body() body: SetAsideLoadLogBody) {
     return this.decisions.setAside(me, loadLogId, body);
+  }
+
+  /** Takes a posted log back: reverses its entries, and lets it wait for a decision again. */
+  @Post('load-logs/:loadLogId/reverse')
+  @HttpCode(200)
+  @RequirePermission('load-logs:post')
+  @ZodResponse({ type: LoadLogReply, status: 200 })
+  reverse(@Me() me: Principal, @Param() { loadLogId }: LoadLogParams, @Body() body: ReverseLoadLogBody) {
+    return this.decisions.reverse(me, loadLogId, body);
   }
 
   /** The file as it was received. */

@@ -172,6 +172,7 @@ export function sampleEntry(overrides: Partial<LedgerEntryDto> = {}): LedgerEntr
     postedByName: 'Ailsa Renwick',
     postedAt: '2026-06-16T09:30:00.000Z',
     hash: 'c0ffee00'.repeat(8),
+    reason: null,
     ...overrides,
   };
 }

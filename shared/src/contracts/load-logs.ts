@@ -69,6 +69,12 @@ export const setAsideLoadLogSchema = z.strictObject({
   reason: z.string().trim().min(1, 'Say why it is set aside.').max(1000),
 });
 export type SetAsideLoadLogInput = z.infer<typeof setAsideLoadLogSchema>;
+/** Takes a posted log back: its entries are reversed, and it waits for a decision again. */
+export const reverseLoadLogSchema = z.strictObject({
+  version: versionSchema,
+  reason: z.string().trim().min(1, 'Say why it is taken back.').max(1000),
+});
+export type ReverseLoadLogInput = z.infer<typeof reverseLoadLogSchema>;
 
 export const logFindingSchema = z.object({
   code: z.string(),
