@@ -1,6 +1,7 @@
 import App from 'antd/es/app';
 import ConfigProvider from 'antd/es/config-provider';
 import { Outlet } from 'react-router-dom';
+import { pageNonce } from '../lib/page-nonce';
 import { antdTheme } from '../theme/antd-theme';
 import { useColourMode, useIsPhone } from '../theme/colour-mode';
 
@@ -18,10 +19,4 @@ export function AntdScope() {
       </App>
     </ConfigProvider>
   );
-}
-
-/** The nonce the server wrote into this page; style elements without it are refused. */
-function pageNonce(): string | undefined {
-  const nonce = document.querySelector<HTMLMetaElement>('meta[property="csp-nonce"]')?.nonce;
-  return nonce && !nonce.startsWith('__') ? nonce : undefined;
 }

@@ -47,7 +47,7 @@ export const COLOURS: Readonly<Record<ColourMode, ColourTokens>> = {
   },
 };
 
-export const FONT_FAMILY = "'Source Sans 3 Variable', 'Source Sans 3', system-ui, 'Segoe UI', sans-serif";
+export const FONT_FAMILY = "'Source Sans 3', system-ui, 'Segoe UI', sans-serif";
 
 export const SIZES = { body: 15, table: 13, phoneInput: 16, grid: 8, radius: 4, touchTarget: 44 } as const;
 

@@ -1,3 +1,4 @@
+import DownloadOutlined from '@ant-design/icons/es/icons/DownloadOutlined';
 import { PlainButton } from '../plain-button/plain-button';
 import type { DataTableColumn } from './data-table';
 import { toCsv } from './to-csv';
@@ -21,5 +22,10 @@ export function CsvDownload<Row>({
     // Revoked on the next turn: the browser has taken the file by then.
     window.setTimeout(() => URL.revokeObjectURL(address), 0);
   };
-  return <PlainButton onClick={save}>Download as CSV</PlainButton>;
+  return (
+    <PlainButton onClick={save}>
+      <DownloadOutlined aria-hidden />
+      Download as CSV
+    </PlainButton>
+  );
 }

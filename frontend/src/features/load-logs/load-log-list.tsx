@@ -1,3 +1,4 @@
+import UploadOutlined from '@ant-design/icons/es/icons/UploadOutlined';
 import type { LoadLogDto } from '@stayledger/shared/contracts/load-logs';
 import { useInfiniteQuery } from '@tanstack/react-query';
 import { Link } from 'react-router-dom';
@@ -24,6 +25,7 @@ export function LoadLogList({ vesselId, zone, mayUpload }: LoadLogListProps) {
   const query = useInfiniteQuery(loadLogQueries.ofVessel(vesselId));
   const add = mayUpload ? (
     <ButtonLink weight="primary" to={paths.addLoadLog.to(vesselId)}>
+      <UploadOutlined aria-hidden />
       Add load log
     </ButtonLink>
   ) : null;

@@ -1,5 +1,11 @@
 import type { Preferences } from '@stayledger/shared/contracts/auth';
 import { KN_PER } from '@stayledger/shared/units/force';
+import dayjs, { type Dayjs } from 'dayjs';
+import timezone from 'dayjs/plugin/timezone';
+import utc from 'dayjs/plugin/utc';
+
+dayjs.extend(utc);
+dayjs.extend(timezone);
 
 type ForceUnit = Preferences['forceUnit'];
 type LengthUnit = Preferences['lengthUnit'];
@@ -16,7 +22,8 @@ const FORCE_UNIT_NAMES: Record<ForceUnit, string> = {
 };
 
 const NO_VALUE = '–';
-const MONTHS = ['Jan', 'Feb', 'Mar', 'Apr', 'May', 'Jun', 'Jul', 'Aug', 'Sep', 'Oct', 'Nov', 'Dec'];
+/** "14 Mar 2027", held together by no-break spaces. */
+const DAY_FORMAT = 'D[\u00a0]MMM[\u00a0]YYYY';
 
 export interface Formatter {
   readonly forceUnit: ForceUnit;
@@ -128,33 +135,17 @@ export function createFormatter(preferences: Preferences): Formatter {
       return ratio > 1 ? `${number(ratio, ratio < 10 ? 1 : 0)} times its allowance` : percent(ratio);
     },
     percent,
-    day: (on) => {
-      const parts = dayParts(on);
-      return parts ? `${parts.day}\u00a0${MONTHS[parts.month - 1]}\u00a0${parts.year}` : NO_VALUE;
-    },
+    day: (on) => calendarDay(on)?.format(DAY_FORMAT) ?? NO_VALUE,
     dueDay: (on, todayOn, zone = '') => {
-      const due = dayParts(on);
-      const today = dayParts(todayOn);
+      const due = calendarDay(on);
+      const today = calendarDay(todayOn);
       if (!due || !today) return NO_VALUE;
-      const withinTwelveMonths =
-        (due.year - today.year) * 372 + (due.month - today.month) * 31 + (due.day - today.day) <= 372;
-      if (withinTwelveMonths) return `${due.day}\u00a0${MONTHS[due.month - 1]}\u00a0${due.year}`;
-      return seasonOf(due.year, due.month, zone);
+      if (!due.isAfter(today.add(12, 'month'))) return due.format(DAY_FORMAT);
+      return seasonOf(due.year(), due.month() + 1, zone);
     },
     instant: (at, zone) => {
       if (at === null || at === undefined) return NO_VALUE;
-      const parts = new Intl.DateTimeFormat('en', {
-        timeZone: zone,
-        year: 'numeric',
-        month: 'numeric',
-        day: 'numeric',
-        hour: '2-digit',
-        minute: '2-digit',
-        hourCycle: 'h23',
-      }).formatToParts(new Date(at));
-      const part = (type: string) => parts.find((candidate) => candidate.type === type)?.value ?? '';
-      const day = `${part('day')}\u00a0${MONTHS[Number(part('month')) - 1]}\u00a0${part('year')}`;
-      return `${day}, ${part('hour')}:${part('minute')}`;
+      return dayjs.utc(at).tz(zone).format(`${DAY_FORMAT}, HH:mm`);
     },
     parseNumber,
   };
@@ -185,9 +176,9 @@ export function parseNumber(text: string): number | null {
   return /^[+-]?(\d+\.?\d*|\.\d+)$/.test(plain) ? Number(plain) : null;
 }
 
-function dayParts(on: string | null | undefined) {
-  const match = /^(\d{4})-(\d{2})-(\d{2})$/.exec(on ?? '');
-  return match ? { year: Number(match[1]), month: Number(match[2]), day: Number(match[3]) } : null;
+/** A calendar day has no zone: it is read and shown in UTC, so that no offset can move it. */
+function calendarDay(on: string | null | undefined): Dayjs | null {
+  return on && /^\d{4}-\d{2}-\d{2}$/.test(on) ? dayjs.utc(on) : null;
 }
 
 /** Zones whose seasons run the other way; a zone we do not know is taken for the northern half. */

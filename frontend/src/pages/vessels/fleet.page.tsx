@@ -1,3 +1,4 @@
+import PlusOutlined from '@ant-design/icons/es/icons/PlusOutlined';
 import { useInfiniteQuery } from '@tanstack/react-query';
 import { useMemo } from 'react';
 import { useSearchParams } from 'react-router-dom';
@@ -36,7 +37,10 @@ export function FleetPage() {
     });
 
   const register = mayRegister ? (
-    <ButtonLink to={paths.registerVessel.pattern}>Register a vessel</ButtonLink>
+    <ButtonLink to={paths.registerVessel.pattern}>
+      <PlusOutlined aria-hidden />
+      Register a vessel
+    </ButtonLink>
   ) : null;
 
   return (
