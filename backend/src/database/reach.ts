@@ -1,4 +1,5 @@
 import type { EntityManager } from '@mikro-orm/postgresql';
+import { UnavailableError } from '../common/errors/app-error.js';
 
 /** Whose eyes the database looks through: row level security shows the vessels of these parties and no others. */
 export interface Reach {
@@ -17,12 +18,25 @@ export async function inReach<T>(
   work: (em: EntityManager) => Promise<T>,
 ): Promise<T> {
   return em.transactional(async (inner) => {
-    await inner.execute(`select set_config('app.parties', ?, true), set_config('app.user_id', ?, true)`, [
+    await begin(inner, reach);
+    return work(inner);
+  });
+}
+
+/** The first statement of every transaction. */
+async function begin(em: EntityManager, reach: Reach): Promise<void> {
+  try {
+    await em.execute(`select set_config('app.parties', ?, true), set_config('app.user_id', ?, true)`, [
       reach.parties.join(','),
       reach.userId ?? '',
     ]);
-    return work(inner);
-  });
+  } catch (error) {
+    // A connection that is cut while the transaction begins is told of here and in these words only.
+    if (error instanceof Error && error.message.includes('Transaction query already complete')) {
+      throw new UnavailableError({ cause: error });
+    }
+    throw error;
+  }
 }
 
 /**
