@@ -17,6 +17,10 @@ import { StoredSpectrum } from '../load-logs/load-spectrum.entity.js';
 import { LogChannel } from '../load-logs/log-channel.entity.js';
 import { FittedPart } from '../parts/fitted-part.entity.js';
 import { PartPhoto } from '../part-photos/part-photo.entity.js';
+import { RerigPlan } from '../rerig-schedules/rerig-plan.entity.js';
+import { RerigRequest } from '../rerig-schedules/rerig-request.entity.js';
+import { RerigSchedule } from '../rerig-schedules/rerig-schedule.entity.js';
+import { YardTermsRow } from '../rerig-schedules/yard-terms.entity.js';
 import { Position } from '../rig/position.entity.js';
 import { RigGeometryRow } from '../rig/rig-geometry.entity.js';
 import { SensorEvent } from '../sensors/sensor-event.entity.js';
@@ -45,6 +49,9 @@ export const ENTITIES = [
   PartPhoto,
   PartStanding,
   Position,
+  RerigPlan,
+  RerigRequest,
+  RerigSchedule,
   RigGeometryRow,
   Sensor,
   SensorEvent,
@@ -57,4 +64,5 @@ export const ENTITIES = [
   Vessel,
   VesselAccess,
   VesselStanding,
+  YardTermsRow,
 ];
