@@ -22,6 +22,7 @@ import { LedgerModule } from './ledger/ledger.module.js';
 import { LifeModule } from './life/life.module.js';
 import { LoadLogsModule } from './load-logs/load-logs.module.js';
 import { PartsModule } from './parts/parts.module.js';
+import { RerigSchedulesModule } from './rerig-schedules/rerig-schedules.module.js';
 import { RigModule } from './rig/rig.module.js';
 import { UsersModule } from './users/users.module.js';
 import { VesselsModule } from './vessels/vessels.module.js';
@@ -45,6 +46,7 @@ import { VesselsModule } from './vessels/vessels.module.js';
     LifeModule,
     LoadLogsModule,
     PartsModule,
+    RerigSchedulesModule,
     RigModule,
     UsersModule,
     VesselsModule,

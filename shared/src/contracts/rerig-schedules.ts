@@ -58,15 +58,17 @@ export const moveScheduleSchema = z.strictObject({
 });
 export type MoveScheduleInput = z.infer<typeof moveScheduleSchema>;
 /** The owner's answer to a proposed plan. */
-export const answerPlanSchema = z.discriminatedUnion('answer', [
-  z.strictObject({ version: versionSchema, answer: z.literal('accept') }),
-  z.strictObject({
+export const answerPlanSchema = z
+  .strictObject({
     version: versionSchema,
-    answer: z.literal('ask'),
-    question: z.string().trim().min(1, 'Write what you want to know.').max(2000),
-  }),
-]);
-export type AnswerPlanInput = z.infer<typeof answerPlanSchema>;
+    answer: z.enum(['accept', 'ask']),
+    question: z.string().trim().max(2000).default(''),
+  })
+  .refine(({ answer, question }) => answer === 'accept' || question !== '', {
+    message: 'Write what you want to know.',
+    path: ['question'],
+  });
+export type AnswerPlanInput = z.input<typeof answerPlanSchema>;
 
 const plannedTaskSchema = z.object({
   taskId: z.string(),
