@@ -53,6 +53,10 @@ export const paths = {
     (vesselId: string) => `/vessels/${vesselId}/load-logs/new`,
   ),
   loadLog: page('/load-logs/:loadLogId', (loadLogId: string) => `/load-logs/${loadLogId}`),
+  ledgerCheck: page(
+    '/vessels/:vesselId/ledger-check',
+    (vesselId: string) => `/vessels/${vesselId}/ledger-check`,
+  ),
   part: page('/parts/:partId', (partId: string) => `/parts/${partId}`),
   editPart: page('/parts/:partId/edit', (partId: string) => `/parts/${partId}/edit`),
   removePart: page('/parts/:partId/remove', (partId: string) => `/parts/${partId}/remove`),

@@ -96,6 +96,11 @@ const lightPages: RouteObject[] = [
     (module) => module.LoadLogReviewPage,
   ),
   lazyPage(
+    paths.ledgerCheck.pattern,
+    () => import('../pages/ledger/ledger-check.page'),
+    (module) => module.LedgerCheckPage,
+  ),
+  lazyPage(
     paths.part.pattern,
     () => import('../pages/parts/part.page'),
     (module) => module.PartPage,

@@ -24,6 +24,7 @@ export function samplePart(overrides: Partial<FittedPartDto> = {}): FittedPartDt
     lowerTerminal: 'swaged',
     threadSize: null,
     pinDiameterMm: null,
+    hardware: null,
     batch: '',
     certificate: '',
     fittedOn: '2019-05-02',

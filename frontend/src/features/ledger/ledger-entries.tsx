@@ -9,16 +9,9 @@ import { CsvDownload } from '../../components/tables/csv-download';
 import { DataTable, type DataTableColumn } from '../../components/tables/data-table';
 import type { Formatter } from '../../lib/formatting/format';
 import { useFormat } from '../../lib/formatting/use-format';
+import { ENTRY_KIND_WORDS } from './entry-kind-words';
+import styles from './ledger-entries.module.css';
 import { ledgerQueries } from './ledger.queries';
-
-const KIND_WORDS: Record<LedgerEntryDto['kind'], string> = {
-  'carried-in': 'Carried in',
-  recorded: 'Recorded',
-  'between-logs': 'Between logs',
-  unlogged: 'Unlogged',
-  'sampling-correction': 'Sampling correction',
-  reversal: 'Reversal',
-};
 
 /** All entries of a part's account with the evidence of each. */
 export function LedgerEntries({ partId, zone }: { partId: string; zone: string }) {
@@ -67,8 +60,13 @@ function columns(format: Formatter, zone: string): DataTableColumn<LedgerEntryDt
     {
       key: 'kind',
       title: 'Entry',
-      render: (entry) => KIND_WORDS[entry.kind],
-      value: (entry) => KIND_WORDS[entry.kind],
+      render: (entry) => (
+        <>
+          {ENTRY_KIND_WORDS[entry.kind]}
+          {entry.reason !== null && <span className={styles.reason}>{entry.reason}</span>}
+        </>
+      ),
+      value: (entry) => ENTRY_KIND_WORDS[entry.kind],
     },
     {
       key: 'detail',
@@ -123,6 +121,13 @@ function columns(format: Formatter, zone: string): DataTableColumn<LedgerEntryDt
       title: 'Posted by',
       render: (entry) => entry.postedByName ?? 'the service',
       value: (entry) => entry.postedByName,
+    },
+    {
+      key: 'number',
+      title: 'Number',
+      numeric: true,
+      render: (entry) => entry.sequence,
+      value: (entry) => entry.sequence,
     },
     {
       key: 'hash',

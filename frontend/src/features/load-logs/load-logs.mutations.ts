@@ -4,6 +4,7 @@ import {
   type LoadLogDto,
   type PostLoadLogInput,
   type RecountLoadLogInput,
+  type ReverseLoadLogInput,
   type SetAsideLoadLogInput,
 } from '@stayledger/shared/contracts/load-logs';
 import { useMutation, useQueryClient } from '@tanstack/react-query';
@@ -45,6 +46,15 @@ export function usePostLoadLog(loadLogId: string) {
 export function useSetAsideLoadLog(loadLogId: string) {
   return useLogDecision(loadLogId, (input: SetAsideLoadLogInput & { idempotencyKey: string }) =>
     apiSend('POST', `/load-logs/${loadLogId}/set-aside`, loadLogSchema, {
+      body: { version: input.version, reason: input.reason },
+      idempotencyKey: input.idempotencyKey,
+    }),
+  );
+}
+
+export function useReverseLoadLog(loadLogId: string) {
+  return useLogDecision(loadLogId, (input: ReverseLoadLogInput & { idempotencyKey: string }) =>
+    apiSend('POST', `/load-logs/${loadLogId}/reverse`, loadLogSchema, {
       body: { version: input.version, reason: input.reason },
       idempotencyKey: input.idempotencyKey,
     }),

@@ -3,6 +3,7 @@ import {
   logReviewSchema,
   postLoadLogSchema,
   recountLoadLogSchema,
+  reverseLoadLogSchema,
   setAsideLoadLogSchema,
   type LoadLogDto,
   type LogReviewDto,
@@ -50,6 +51,17 @@ function openLog(
         };
         return reply(loadLogSchema, log);
       },
+      'POST /load-logs/:id/reverse': () => {
+        log = {
+          ...log,
+          state: 'counted',
+          decidedByName: 'Ailsa Renwick',
+          decidedAt: '2026-06-17T09:30:00.000Z',
+          decisionReason: 'The cell had slipped',
+          version: log.version + 1,
+        };
+        return reply(loadLogSchema, log);
+      },
       'POST /load-logs/:id/recount': () => {
         log = { ...log, state: 'counting', failure: null, version: log.version + 1 };
         return reply(loadLogSchema, log);
@@ -58,6 +70,7 @@ function openLog(
     {
       'POST /load-logs/:id/post': postLoadLogSchema,
       'POST /load-logs/:id/set-aside': setAsideLoadLogSchema,
+      'POST /load-logs/:id/reverse': reverseLoadLogSchema,
       'POST /load-logs/:id/recount': recountLoadLogSchema,
     },
   );
@@ -111,6 +124,33 @@ describe('load log page', () => {
     await user.click(screen.getByRole('button', { name: 'Set aside' }));
     expect(await screen.findByText(/Set aside by Ailsa Renwick/)).toBeTruthy();
     expect(sent('/set-aside')[0].body).toEqual({ version: 3, reason: 'Sensor was loose' });
+  });
+
+  it('takes a posted log back with a reason, and says so afterwards', async () => {
+    const posted: Partial<LoadLogDto> = {
+      state: 'posted',
+      decidedByName: 'Ailsa Renwick',
+      decidedAt: '2026-06-16T09:30:00.000Z',
+    };
+    const { user, sent } = openLog(sampleLog(posted));
+    await user.click(await screen.findByRole('button', { name: 'Take back from the ledger…' }));
+    expect(screen.getByText(/Every entry this log made is reversed/)).toBeTruthy();
+    await user.click(screen.getByRole('button', { name: 'Take it back' }));
+    expect(sent('/reverse')).toHaveLength(0);
+    expect(document.activeElement).toBe(screen.getByLabelText('Why is this log taken back?'));
+    await user.type(screen.getByLabelText('Why is this log taken back?'), 'The cell had slipped');
+    await user.click(screen.getByRole('button', { name: 'Take it back' }));
+    expect((await screen.findByText(/posted and taken back by Ailsa Renwick/)).textContent).toContain(
+      'The cell had slipped',
+    );
+    expect(sent('/reverse')[0].body).toEqual({ version: 3, reason: 'The cell had slipped' });
+    expect(screen.getByRole('button', { name: 'Post to ledger' })).toBeTruthy();
+  });
+
+  it('lets nobody else take a log back', async () => {
+    openLog(sampleLog({ state: 'posted', decidedAt: '2026-06-16T09:30:00.000Z' }), { role: 'owner' });
+    await screen.findByRole('table', { name: 'Allowance used before and after this log' });
+    expect(screen.queryByRole('button', { name: /Take back/ })).toBeNull();
   });
 
   it('leaves the decision to those who look after the vessel', async () => {

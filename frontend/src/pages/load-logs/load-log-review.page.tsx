@@ -19,6 +19,7 @@ import { loadLogQueries } from '../../features/load-logs/load-logs.queries';
 import styles from '../../features/load-logs/load-log-page.module.css';
 import { ReceivingLog } from '../../features/load-logs/receiving-log';
 import { RecountForm } from '../../features/load-logs/recount-form';
+import { ReverseLog } from '../../features/load-logs/reverse-log';
 import { Traces } from '../../features/load-logs/traces';
 import { rigQueries } from '../../features/rig/rig.queries';
 import { vesselQueries } from '../../features/vessels/vessels.queries';
@@ -121,6 +122,14 @@ function CountedLog({ log, vessel, mayUpload }: { log: LoadLogDto; vessel: Vesse
           {log.decisionReason !== null && log.decisionReason !== '' && ` Reason: ${log.decisionReason}`}
         </p>
       )}
+      {log.state === 'counted' && log.decidedAt !== null && (
+        <div className={styles.notice}>
+          <Attention>
+            This log was posted and taken back by {log.decidedByName ?? 'a former user'} on{' '}
+            {format.instant(log.decidedAt, vessel.zone)}. Reason: {log.decisionReason}
+          </Attention>
+        </div>
+      )}
       <LoadLogFacts log={log} zone={vessel.zone} />
       <QueryView query={review} loadingLabel="Working out what posting would change">
         {(loaded) => (
@@ -144,6 +153,9 @@ function CountedLog({ log, vessel, mayUpload }: { log: LoadLogDto; vessel: Vesse
                 <BeforeAfter parts={loaded.parts} isPosted={log.state === 'posted'} />
               </section>
             </div>
+            {log.state === 'posted' && vessel.permissions.includes('load-logs:post') && (
+              <ReverseLog key={log.version} log={log} />
+            )}
             {log.state === 'counted' && mayUpload && !isRecounting && (
               <p>
                 <PlainButton onClick={() => setIsRecounting(true)}>

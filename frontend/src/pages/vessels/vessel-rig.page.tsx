@@ -57,6 +57,9 @@ export function VesselRigPage() {
             />
             <div className={styles.actions}>
               {addPosition}
+              {vessel.permissions.includes('ledger:check') && (
+                <ButtonLink to={paths.ledgerCheck.to(vessel.id)}>Check the ledger</ButtonLink>
+              )}
               <CsvDownload name={`rig of ${vessel.name}`} rows={items} columns={columns} />
             </div>
           </>
