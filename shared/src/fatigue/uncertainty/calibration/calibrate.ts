@@ -1,3 +1,4 @@
+import { fastNormalCdf } from '../../statistics/fast-normal-cdf.js';
 import { randomStreams } from '../../statistics/random-streams.js';
 import { damageAt } from '../damage-at.js';
 import { failureProbabilityAt } from '../failure-probability-at.js';
@@ -5,7 +6,14 @@ import { FAN_DOUBTS } from '../forecast-fan.js';
 import { lifeDraws } from '../life-draws.js';
 import { type PartLife, partLife } from '../part-life.js';
 import { yearsToFailureProbability } from '../years-to-failure-probability.js';
-import { FORECAST_YEARS, type Misfit, type Stratum, syntheticVessel } from './synthetic-vessel.js';
+import { yearsToLevel } from '../years-to-level.js';
+import {
+  FORECAST_YEARS,
+  type Misfit,
+  type Stratum,
+  type SyntheticVessel,
+  syntheticVessel,
+} from './synthetic-vessel.js';
 
 /** How well forecasts of one kind met what happened. */
 export interface Coverage {
@@ -53,7 +61,7 @@ export function calibrate(options: {
     const { use, part, truth } = syntheticVessel(seed, stratum, misfit);
     const shared = lifeDraws(use, randomStreams(seed ^ 0x5bd1e995), { draws, years: 30 });
     const forecast = partLife(shared, part);
-    life.add(placeOfLife(forecast, truth.lifeYears, seed), lnOverMedianLife(forecast, truth.lifeYears));
+    life.add(placeOfLife(forecast, truth), lnOverMedianLife(forecast, truth));
     if (!withFan) continue;
     const expected = fanAt(partLife(shared, part, FAN_DOUBTS));
     fan.add(
@@ -64,15 +72,32 @@ export function calibrate(options: {
   return { life: life.coverage(), fan: fan.coverage() };
 }
 
-/** A life that ended before today falls anywhere below today's probability. */
-function placeOfLife(forecast: PartLife, lifeYears: number, seed: number): number {
+/** Where in its forecast a life ended. */
+function placeOfLife(forecast: PartLife, { lifeYears, pastYears }: SyntheticVessel['truth']): number {
   if (lifeYears >= 0) return failureProbabilityAt(forecast, lifeYears);
-  return failureProbabilityAt(forecast, 0) * randomStreams(seed)('before today')();
+  return failedInPast(forecast, (pastYears + lifeYears) / pastYears);
 }
 
-function lnOverMedianLife(forecast: PartLife, lifeYears: number): number {
-  const median = yearsToFailureProbability(forecast, 0.5, FAR_YEARS);
-  return lifeYears > 0 && median > 0 ? Math.log(lifeYears / median) : NaN;
+/**
+ * ln of true over median life, both counted from the day the part was fitted: counted from today, lives that already
+ * ended would drop out, and those that are left would seem too long.
+ */
+function lnOverMedianLife(forecast: PartLife, { lifeYears, pastYears }: SyntheticVessel['truth']): number {
+  const median =
+    failureProbabilityAt(forecast, 0) >= 0.5
+      ? pastYears * yearsToLevel((share) => failedInPast(forecast, share), 0.5, 1)
+      : pastYears + yearsToFailureProbability(forecast, 0.5, FAR_YEARS);
+  return Math.log((pastYears + lifeYears) / median);
+}
+
+/** Probability that a part of one detail failed within a share of its past, whose damage fell evenly. */
+function failedInPast({ draws, paths, curveLnSds, lnMinerSums }: PartLife, share: number): number {
+  let sum = 0;
+  for (let i = 0; i < draws.draws; i++) {
+    const damage = share * damageAt(paths[0], i, 0, undefined);
+    sum += fastNormalCdf((Math.log(damage) - lnMinerSums[i]) / curveLnSds[0]);
+  }
+  return sum / draws.draws;
 }
 
 function fanAt(forecast: PartLife): Float64Array {
@@ -96,25 +121,22 @@ class Tally {
   private inside = 0;
   private sum = 0;
   private squares = 0;
-  private ratios = 0;
 
   add(place: number, lnRatio: number): void {
     this.vessels++;
     this.transform[Math.min(Math.floor(place * 20), 19)]++;
     if (place >= 0.05 && place <= 0.95) this.inside++;
-    if (!Number.isFinite(lnRatio)) return;
-    this.ratios++;
     this.sum += lnRatio;
     this.squares += lnRatio * lnRatio;
   }
 
   coverage(): Coverage {
-    const bias = this.sum / this.ratios;
+    const bias = this.sum / this.vessels;
     return {
       vessels: this.vessels,
       between5And95: this.inside / this.vessels,
       bias,
-      biasError: Math.sqrt((this.squares / this.ratios - bias * bias) / this.ratios),
+      biasError: Math.sqrt((this.squares / this.vessels - bias * bias) / this.vessels),
       transform: [...this.transform],
     };
   }

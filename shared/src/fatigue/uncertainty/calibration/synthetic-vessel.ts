@@ -31,8 +31,10 @@ export interface SyntheticVessel {
   use: UseRecord;
   part: PartRecord;
   truth: {
-    /** Years from today at which the part really fails; below zero: it already has. */
+    /** Years from today at which the part really fails, at the planned hours; below zero: it already has. */
     lifeYears: number;
+    /** Years it has been in use, at the planned hours. */
+    pastYears: number;
     /** Design damage after five more years, at the true loads, without doubt about stress or curve. */
     designDamageInFiveYears: number;
   };
@@ -126,6 +128,7 @@ export function syntheticVessel(seed: number, stratum: Stratum, misfit?: Misfit)
   const weather = new Weather(normalSource(streams('weather')));
   const days: UseDay[] = [];
   const logged: LoggedWatch[] = [];
+  const past: { hours: number; damage: number }[] = [];
   let trueDamage = 0;
   let loadDamage = 0;
   for (let s = 0; s < seasons; s++) {
@@ -138,7 +141,9 @@ export function syntheticVessel(seed: number, stratum: Stratum, misfit?: Misfit)
       const unloggedHours = groups.map(() => 0);
       for (const windKn of weather.nextDayKn()) {
         const hours = between(1, 3);
-        trueDamage += factor * hours * trueRate(windKn);
+        const damage = factor * hours * trueRate(windKn);
+        past.push({ hours, damage });
+        trueDamage += damage;
         loadDamage += factor * hours * loadRate(windKn);
         const group = windKnown ? BANDS_KN.findIndex((bound) => windKn < bound) : 0;
         const on = isLogged[d] && !(misfit !== undefined && windKn > misfit.loggerOffAboveKn);
@@ -150,14 +155,16 @@ export function syntheticVessel(seed: number, stratum: Stratum, misfit?: Misfit)
   }
   if (logged.length === 0) return syntheticVessel(seed + 1_000_003, stratum, misfit);
   const carriedIn = Math.exp(lnFactor(CARRIED_IN_COV)) * carriedInHours;
-  trueDamage += carriedIn * meanRate(trueRate);
+  past.unshift({ hours: carriedInHours, damage: carriedIn * meanRate(trueRate) });
+  trueDamage += past[0].damage;
   loadDamage += carriedIn * meanRate(loadRate);
 
   // The future.
   const daysAYear = Math.max(1, Math.round(plannedHours / HOURS_A_DAY));
   const hoursADay = plannedHours / daysAYear;
   const failsAt = minerSum * Math.exp(lnLife);
-  let lifeYears = trueDamage >= failsAt ? -1 : Infinity;
+  const pastYears = past.reduce((sum, { hours }) => sum + hours, 0) / plannedHours;
+  let lifeYears = trueDamage >= failsAt ? hoursUntil(past, failsAt) / plannedHours - pastYears : Infinity;
   let inFiveYears = loadDamage;
   let year = 0;
   for (; year < HORIZON_YEARS && (lifeYears === Infinity || year < FORECAST_YEARS); year++) {
@@ -218,7 +225,7 @@ export function syntheticVessel(seed: number, stratum: Stratum, misfit?: Misfit)
         },
       ],
     },
-    truth: { lifeYears, designDamageInFiveYears: inFiveYears * 10 ** (2 * curveSd) },
+    truth: { lifeYears, pastYears, designDamageInFiveYears: inFiveYears * 10 ** (2 * curveSd) },
   };
 }
 
@@ -329,6 +336,18 @@ function damageShares(logged: readonly LoggedWatch[], curve: Curve, trueOverReco
   return [...ofGroup].flatMap(([day, groups]) =>
     [...groups].map(([group, damage]) => ({ day, group, share: damage / (ofDay.get(day) ?? 1) })),
   );
+}
+
+/** Hours until the damage of the past, in order of time, reached a level. */
+function hoursUntil(past: readonly { hours: number; damage: number }[], level: number): number {
+  let passed = 0;
+  let sum = 0;
+  for (const { hours, damage } of past) {
+    if (sum + damage >= level) return passed + (hours * (level - sum)) / damage;
+    passed += hours;
+    sum += damage;
+  }
+  return passed;
 }
 
 /** So many of so many, chosen evenly. */
