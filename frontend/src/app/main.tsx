@@ -4,6 +4,7 @@ import { createRoot } from 'react-dom/client';
 import '../theme/fonts.css';
 import '../theme/theme.css';
 import '../theme/base.css';
+import '../theme/print.css';
 import { Providers } from './providers';
 import { createAppRouter } from './router';
 import { RouterProvider } from 'react-router-dom';

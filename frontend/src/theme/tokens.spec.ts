@@ -17,10 +17,12 @@ function contrast(first: string, second: string): number {
 
 const css = readFileSync(`${import.meta.dirname}/theme.css`, 'utf8');
 
+const printCss = readFileSync(`${import.meta.dirname}/print.css`, 'utf8');
+
 /** Declarations of the block that follows a selector. */
-function declared(selector: string): Record<string, string> {
-  const from = css.indexOf('{', css.indexOf(selector));
-  const block = css.slice(from + 1, css.indexOf('}', from));
+function declared(selector: string, sheet = css): Record<string, string> {
+  const from = sheet.indexOf('{', sheet.indexOf(selector));
+  const block = sheet.slice(from + 1, sheet.indexOf('}', from));
   return Object.fromEntries(
     [...block.matchAll(/(--[\w-]+):\s*(#[0-9a-f]{6});/g)].map(([, name, value]) => [name, value]),
   );
@@ -36,6 +38,15 @@ describe('theme.css', () => {
       Object.entries(cssVariables(mode)).map(([name, value]) => [name, value.toLowerCase()]),
     );
     expect(declared(selector)).toEqual(wanted);
+  });
+});
+
+describe('print.css', () => {
+  it('prints the light tokens on white, whatever the screen shows', () => {
+    const wanted = { ...cssVariables('light'), '--paper': '#ffffff', '--sheet': '#ffffff' };
+    expect(declared(":root[data-theme='dark'] {", printCss)).toEqual(
+      Object.fromEntries(Object.entries(wanted).map(([name, value]) => [name, value.toLowerCase()])),
+    );
   });
 });
 

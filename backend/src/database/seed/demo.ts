@@ -23,6 +23,7 @@ import { VesselAccess, type AccessRole } from '../../vessels/vessel-access.entit
 import { Vessel } from '../../vessels/vessel.entity.js';
 import { inReach } from '../reach.js';
 import { ServiceSetting } from '../service-setting.entity.js';
+import { seedOwnReference } from './demo-reference.js';
 import {
   DEMO_FIRMS,
   DEMO_PEOPLE,
@@ -48,6 +49,7 @@ export async function seedDemo(
     if ((await inner.count(User)) > 0) return null;
     const firstDayOn = clock.todayIn(DEMO_VESSELS[0].zone);
     await seedPeople(inner, clock, firstDayOn);
+    await seedOwnReference(inner, DEMO_FIRMS.riggers.id, clock.now());
     for (const vessel of DEMO_VESSELS) await seedVessel(inner, clock, vessel, firstDayOn);
     return { vessels: DEMO_VESSELS.length, users: DEMO_PEOPLE.length };
   });

@@ -25,6 +25,8 @@ export interface ChartMarker {
   label: string;
   /** `flag` is rust and means due or overdue; `rule` is a ruled ink line. */
   kind: 'rule' | 'flag';
+  /** Where the label of a level (axis y) stands, so that it keeps clear of the line. */
+  labelAt?: 'top-left' | 'top-right' | 'bottom-left';
 }
 
 export interface LineChartCanvasProps {
@@ -138,7 +140,7 @@ export function LineChartDrawing({
         axis: marker.axis,
         value: marker.axis === 'x' ? toNumber(marker.value) : Number(marker.value),
         legend: marker.label,
-        legendPosition: marker.axis === 'x' ? 'top' : 'top-left',
+        legendPosition: marker.axis === 'x' ? 'top' : (marker.labelAt ?? 'top-left'),
         lineStyle: {
           stroke: marker.kind === 'flag' ? colours.rust : colours.ink,
           strokeWidth: marker.kind === 'flag' ? 2 : 1,

@@ -3,7 +3,7 @@ import { useMemo } from 'react';
 import { LineChart } from '../../components/charts/line-chart';
 import { useFormat } from '../../lib/formatting/use-format';
 import { curvePoints } from './curve-points';
-import { curveStretches } from './curve-stretches';
+import { curveStretches, type CurveStretch } from './curve-stretches';
 import { MEASURE_WORDS, measureUnit } from './reference-words';
 
 interface CurveChartProps {
@@ -30,22 +30,32 @@ export function CurveChart({ curve, csvName, title = 'Range against cycles to fa
       title={title}
       headingLevel={2}
       description={`${validityWords(minRange, maxRange, figure)} Both axes are logarithmic: one step to the left is a tenth of the life.`}
-      series={curveStretches(points, curve.validity).map((stretch, index) => ({
+      series={supportedFirst(curveStretches(points, curve.validity)).map((stretch, index) => ({
         id: `${stretch.kind}-${index}`,
         label: stretch.kind === 'supported' ? curve.name : 'beyond what the source supports',
         stroke: stretch.kind === 'supported' ? 'solid' : 'dashed',
         points: stretch.points.map(({ range: y, cycles: x }) => ({ x, y })),
       }))}
       markers={[
-        ...bounds.map((value, index) => ({
+        ...bounds.map((value) => ({
           axis: 'y' as const,
           value,
-          label: bounds.length > 1 && index === 0 ? 'lowest range supported' : boundWords(value === maxRange),
+          label: value === maxRange ? 'highest range supported' : 'lowest range supported',
           kind: 'rule' as const,
+          // A falling line leaves the upper right and the lower left free.
+          labelAt: value === maxRange ? ('top-right' as const) : ('bottom-left' as const),
         })),
         ...(curve.cutOffRange === null
           ? []
-          : [{ axis: 'y' as const, value: curve.cutOffRange, label: 'cut-off', kind: 'rule' as const }]),
+          : [
+              {
+                axis: 'y' as const,
+                value: curve.cutOffRange,
+                label: 'cut-off',
+                kind: 'rule' as const,
+                labelAt: 'bottom-left' as const,
+              },
+            ]),
       ]}
       xScale="log"
       yScale="log"
@@ -83,8 +93,9 @@ export function CurveChart({ curve, csvName, title = 'Range against cycles to fa
   );
 }
 
-function boundWords(highest: boolean): string {
-  return highest ? 'highest range supported' : 'lowest range supported';
+/** The first series is drawn in full ink. */
+function supportedFirst(stretches: CurveStretch[]): CurveStretch[] {
+  return [...stretches].sort((a, b) => Number(a.kind === 'beyond') - Number(b.kind === 'beyond'));
 }
 
 function validityWords(

@@ -19,7 +19,7 @@ interface RigElevationProps {
 }
 
 /** A wide drawing beside the words, a narrow one above them; marks keep their size in both. */
-const WIDE = { width: 720, maxHeight: 620, markSize: 24 } as const;
+const WIDE = { width: 720, maxHeight: 500, markSize: 24 } as const;
 const PHONE = { width: 343, maxHeight: 460, markSize: 18 } as const;
 /** A wire this thick is drawn one pixel wide; others in proportion. */
 const MM_PER_PX = 6;
@@ -101,10 +101,12 @@ export function RigElevation({ name, rig, todayOn, zone }: RigElevationProps) {
           {drawing.spreaders.map((line, index) => (
             <path key={index} className={styles.spreader} d={lineOf(line)} />
           ))}
+          {drawing.stays.map((stay) => (
+            <path key={stay.id} className={styles.leader} d={lineOf([stay.path[0], stay.mark])} />
+          ))}
           {drawing.stays.map((stay, index) => {
             const position = positions[index];
             const line = lineOf(stay.path);
-            const [end] = stay.path;
             return (
               <g
                 key={stay.id}
@@ -124,7 +126,6 @@ export function RigElevation({ name, rig, todayOn, zone }: RigElevationProps) {
                   d={line}
                   strokeWidth={position.part ? Math.max(1, position.part.diameterMm / MM_PER_PX) : 1}
                 />
-                <path className={styles.leader} d={lineOf([end, stay.mark])} />
                 <circle
                   className={styles.ground}
                   cx={stay.mark.x}

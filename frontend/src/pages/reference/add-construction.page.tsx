@@ -16,7 +16,7 @@ export function AddConstructionPage() {
       <PageHeading
         title="Add a construction"
         above={<Link to={paths.reference.pattern}>Reference data</Link>}
-        below="Wire, rod or rope by a maker's table or a certificate. It is kept for your firm alone and can be fitted at once."
+        below="Wire, rod or rope by a maker’s table or a certificate. It is kept for your firm alone and can be fitted at once."
       />
       <QueryView query={constructions}>
         {({ items }) => (
