@@ -7,6 +7,7 @@ import { AppModule } from '@stayledger/backend/app.module';
 import { EnvironmentError, readEnv, type Env } from '@stayledger/backend/config/env';
 import { readDemo } from '@stayledger/backend/database/seed/read-demo';
 import { AnotherProcessError, becomeSoleProcess } from '@stayledger/backend/database/sole-process';
+import { waitForDatabase } from '@stayledger/backend/database/wait-for-database';
 import { takeBackLeases } from './common/job-leases.js';
 import { bringInDemoLogs } from './demo/bring-in-demo-logs.js';
 import { JobsModule } from './jobs.module.js';
@@ -20,6 +21,7 @@ const logger = new Logger('all-in-one');
 async function main(): Promise<void> {
   const env = readEnv();
   const embedded = env.REDIS_URL === undefined;
+  await waitForDatabase(env.DATABASE_APP_URL, () => logger.warn('the database is away; waiting for it'));
   const sole = embedded ? await becomeSoleProcess(env.DATABASE_APP_URL, giveUp) : null;
   const app = await createApp(env, AllInOneModule);
   if (embedded) await takeBackLeases(app.get(EntityManager).fork());

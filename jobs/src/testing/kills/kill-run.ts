@@ -25,6 +25,7 @@ export interface KillFigures {
   logsPosted: number;
   uploadsCancelled: number;
   countsReadAgain: number;
+  startsThatBrokeOff: number;
   requestsUnanswered: number;
   acknowledgedMiBChecked: number;
   seconds: number;
@@ -115,6 +116,7 @@ export class KillRun {
       logsPosted: posted,
       uploadsCancelled: this.vessels.length * this.plan.length - posted,
       countsReadAgain: sum(this.vessels.map(({ readAgain }) => readAgain)),
+      startsThatBrokeOff: this.topology.startsAgain(),
       requestsUnanswered: sum(this.vessels.map(({ client }) => client.unanswered)),
       acknowledgedMiBChecked: Math.round(this.checkedBytes / 1024 ** 2),
       seconds: Math.round((performance.now() - from) / 1000),

@@ -16,6 +16,8 @@ export interface Topology {
   killSomething(random: SeededRandom, whileDown: () => void): Promise<string>;
   /** Asks all to end; what did not end as it should, in words. */
   stop(): Promise<string[]>;
+  /** How often a process ended by itself while it started and was started again. */
+  startsAgain(): number;
   /** What the processes logged as errors. */
   errors(): string[];
   /** Ends whatever runs, by force. */
@@ -31,6 +33,7 @@ const BACKEND = `select pid from pg_stat_activity
 /** Processes that are started from the build, killed, and started again. */
 class Processes {
   private readonly errors: string[] = [];
+  startsAgain = 0;
   private readonly running = new Map<string, { name: ProgramName; process: ServiceProcess }>();
 
   constructor(private readonly env: Record<string, string>) {}
@@ -39,8 +42,23 @@ class Processes {
     this.running.set(label, { name, process: ServiceProcess.start(name, this.env) });
   }
 
+  /**
+   * A process whose database dies in the very seconds of its start ends by itself; whoever keeps services running starts
+   * it again, and so do we.
+   */
   async untilReady(): Promise<void> {
-    for (const { process } of this.running.values()) await process.untilReady();
+    for (const [label, { name }] of this.running) {
+      for (let tries = 1; ; tries += 1) {
+        const { process } = this.running.get(label) ?? {};
+        if (process === undefined || (await process.ready)) break;
+        const { code, signal } = await process.ended;
+        if (code !== 2 || tries === 5) {
+          throw new Error(`${label} ended with ${code ?? signal} while it started: ${process.lastWords}`);
+        }
+        this.startsAgain += 1;
+        this.start(label, name);
+      }
+    }
   }
 
   async kill(label: string, whileDown: () => void): Promise<string> {
@@ -113,6 +131,7 @@ export async function allInOne({
       return killBackend(database, random);
     },
     stop: () => processes.stop(),
+    startsAgain: () => processes.startsAgain,
     errors: () => processes.allErrors(),
     end: () => processes.end(),
   };
@@ -153,6 +172,7 @@ export async function severalProcesses({
       return killBackend(database, random);
     },
     stop: () => processes.stop(),
+    startsAgain: () => processes.startsAgain,
     errors: () => processes.allErrors(),
     async end() {
       await processes.end();
