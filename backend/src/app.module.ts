@@ -22,8 +22,11 @@ import { LedgerModule } from './ledger/ledger.module.js';
 import { LifeModule } from './life/life.module.js';
 import { LoadLogsModule } from './load-logs/load-logs.module.js';
 import { PartsModule } from './parts/parts.module.js';
+import { PositionHistoryModule } from './position-history/position-history.module.js';
 import { RerigSchedulesModule } from './rerig-schedules/rerig-schedules.module.js';
+import { RigCopiesModule } from './rig-copies/rig-copies.module.js';
 import { RigModule } from './rig/rig.module.js';
+import { SensorsModule } from './sensors/sensors.module.js';
 import { UsersModule } from './users/users.module.js';
 import { VesselsModule } from './vessels/vessels.module.js';
 
@@ -46,8 +49,11 @@ import { VesselsModule } from './vessels/vessels.module.js';
     LifeModule,
     LoadLogsModule,
     PartsModule,
+    PositionHistoryModule,
     RerigSchedulesModule,
+    RigCopiesModule,
     RigModule,
+    SensorsModule,
     UsersModule,
     VesselsModule,
   ],

@@ -106,9 +106,14 @@ async function makeWorld(): Promise<World> {
     state: 'failed',
     created_at: now,
   });
+  const sensor = await agent
+    .post(`/api/vessels/${vessel.id}/sensors`)
+    .send({ name: 'Unmentionable pin', kind: 'pin' })
+    .expect(201);
   return {
     vessel,
     ids: {
+      sensorId: sensor.body.id,
       vesselId: vessel.id,
       positionId: free.id,
       partId: part.body.id,
@@ -121,6 +126,23 @@ async function makeWorld(): Promise<World> {
   };
 }
 
+const GEOMETRY = {
+  deckLengthM: 10,
+  beamM: 3,
+  bowspritTip: null,
+  masts: [
+    {
+      key: 'main',
+      footAftM: 4,
+      footUpM: 0,
+      heightM: 12,
+      houndsHeightM: 12,
+      rakeDegrees: 0,
+      spreaders: [],
+      stayed: true,
+    },
+  ],
+};
 const FIT = { constructionId: 'strand-1x19-316', diameterMm: 8 };
 const mappingTo = (positionId: string) => ({
   delimiter: ',',
@@ -131,6 +153,14 @@ const mappingTo = (positionId: string) => ({
 
 /** A body each route accepts, so that the answer is about reach and not about the body. */
 const BODIES: Record<string, (world: World) => object> = {
+  'post /api/vessels/{vesselId}/position-pairs': () => ({ kind: 'lower' }),
+  'post /api/vessels/{vesselId}/rig/template': () => ({ template: 'masthead-sloop' }),
+  'put /api/vessels/{vesselId}/rig/geometry': () => ({ version: null, geometry: GEOMETRY }),
+  'post /api/vessels/{vesselId}/rig/csv': () => ({ csv: 'place,side', apply: false }),
+  'post /api/vessels/{vesselId}/sisters': () => ({ name: newId(), withParts: false }),
+  'post /api/vessels/{vesselId}/sensors': () => ({ name: newId(), kind: 'pin' }),
+  'patch /api/sensors/{sensorId}': () => ({ version: 1, notes: 'Seen' }),
+  'post /api/sensors/{sensorId}/events': () => ({ kind: 'calibration', doneOn: '2027-06-01' }),
   'put /api/vessels/{vesselId}/usage-plan': () => ({ sailingHoursPerYear: 400 }),
   'post /api/vessels/{vesselId}/load-logs': ({ ids }) => ({
     fileName: 'log.csv',
@@ -153,7 +183,7 @@ const BODIES: Record<string, (world: World) => object> = {
 };
 
 const aboutOneVessel = () =>
-  routes.filter(({ path }) => /\{(vessel|position|part|loadLog|job)Id\}/.test(path));
+  routes.filter(({ path }) => /\{(vessel|position|part|sensor|loadLog|job)Id\}/.test(path));
 
 const addressIn = (path: string, ids: Record<string, string>): string =>
   path.replace(/\{(\w+)\}/g, (_, name: string) => ids[name] ?? 'no-such-parameter');

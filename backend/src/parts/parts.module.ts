@@ -10,5 +10,6 @@ import { PartsService } from './parts.service.js';
   imports: [AuditModule, ConstructionsModule, PartFiguresModule, VesselReachModule],
   controllers: [PartsController],
   providers: [PartsService],
+  exports: [PartsService],
 })
 export class PartsModule {}

@@ -7,6 +7,7 @@ import type {
   RemovePartInput,
   UpdatePartInput,
 } from '@stayledger/shared/contracts/parts';
+import { isTwin } from '@stayledger/shared/rig/load-basis';
 import type { z } from 'zod';
 import { AuditService } from '../audit/audit.service.js';
 import type { Principal } from '../auth/principal.js';
@@ -26,7 +27,7 @@ import { areaOf, breakingLoadOf, terminal } from './part-strength.js';
 
 type FitInput = z.output<typeof fitPartSchema>;
 /** A whole description, as it is when a part is fitted and after a change was laid over the stored one. */
-type Description = FitInput;
+type Description = Omit<FitInput, 'alsoOtherSide'>;
 
 @Injectable()
 export class PartsService {
@@ -40,8 +41,46 @@ export class PartsService {
   ) {}
 
   /** Fits a part into an empty position and opens its account. */
-  async fit(me: Principal, positionId: string, input: FitInput): Promise<FittedPartDto> {
-    const { vessel } = await this.reach.positionOrFail(me, positionId, 'rig:update');
+  async fit(
+    me: Principal,
+    positionId: string,
+    { alsoOtherSide, ...input }: FitInput,
+  ): Promise<FittedPartDto> {
+    const { vessel, position } = await this.reach.positionOrFail(me, positionId, 'rig:update');
+    if (!alsoOtherSide) return this.toDto(await this.fitOne(me, vessel, positionId, input), vessel);
+    const twinId = await this.emptyTwinOf(position);
+    // In the order of their ids, so that two people fitting one pair take turns and do not lock each other out.
+    const parts = new Map<string, FittedPart>();
+    for (const id of [positionId, twinId].sort()) parts.set(id, await this.fitOne(me, vessel, id, input));
+    const part = parts.get(positionId);
+    if (!part) throw new Error('A fitted part is among the fitted parts');
+    return this.toDto(part, vessel);
+  }
+
+  private async emptyTwinOf(position: Position): Promise<string> {
+    const { vessel, kind, mast } = position;
+    const twins = (await this.em.find(Position, { vessel, kind, mast, archivedAt: null })).filter((other) =>
+      isTwin(position, other),
+    );
+    for (const { id } of twins) {
+      if ((await this.em.count(FittedPart, { position: id, removedOn: null })) === 0) return id;
+    }
+    throw new InvalidRequestError({
+      alsoOtherSide: [
+        twins.length === 0
+          ? 'There is no such place on the other side. Add it first.'
+          : 'The place on the other side holds a part already.',
+      ],
+    });
+  }
+
+  /** Fits without asking whether the person may: the caller did. */
+  private async fitOne(
+    me: Principal,
+    vessel: Vessel,
+    positionId: string,
+    input: Description,
+  ): Promise<FittedPart> {
     // Two people fitting into one position: the second waits here and then finds it taken.
     const position = await this.em.findOneOrFail(
       Position,
@@ -72,7 +111,7 @@ export class PartsService {
       vesselId: vessel.id,
       data: { positionId, constructionId: input.constructionId, diameterMm: input.diameterMm },
     });
-    return this.toDto(part, vessel);
+    return part;
   }
 
   async get(me: Principal, partId: string): Promise<FittedPartDto> {

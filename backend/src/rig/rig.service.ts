@@ -1,6 +1,7 @@
 import { EntityManager, LockMode } from '@mikro-orm/postgresql';
 import { Injectable } from '@nestjs/common';
 import type {
+  createPairSchema,
   createPositionSchema,
   PositionDto,
   RigDto,
@@ -24,6 +25,7 @@ import { positionLabel } from './position-label.js';
 import { toPositionDto, type PartInPosition } from './position.mapper.js';
 
 type CreateInput = z.output<typeof createPositionSchema>;
+type PairInput = z.output<typeof createPairSchema>;
 
 @Injectable()
 export class RigService {
@@ -79,6 +81,27 @@ export class RigService {
       data: { kind: input.kind, side: input.side, label },
     });
     return toPositionDto(position, null, this.clock.todayIn(vessel.zone));
+  }
+
+  /** Port and starboard of one kind; a side that is there already is left alone. */
+  async addPair(me: Principal, vesselId: string, input: PairInput): Promise<RigDto> {
+    await this.reach.findOrFail(me, vesselId, 'rig:update');
+    const sides = knownKind(input.kind).sides.filter((side) => side !== 'centre');
+    if (sides.length < 2) {
+      throw new InvalidRequestError({ kind: ['This place stands on the centre line; add it alone.'] });
+    }
+    const there = await this.em.find(Position, {
+      vessel: vesselId,
+      kind: input.kind,
+      mast: input.mast,
+      archivedAt: null,
+    });
+    for (const side of sides) {
+      if (!there.some((position) => position.side === side)) {
+        await this.addPosition(me, vesselId, { ...input, side });
+      }
+    }
+    return this.rig(me, vesselId);
   }
 
   async updatePosition(

@@ -40,6 +40,10 @@ export class Sensor extends EditableRow {
   @JsonColumn({ nullable: true })
   scale: SensorScale | null = null;
 
+  /** Places that carry the same load, with nothing joining in between: stated by a person, never inferred. */
+  @JsonColumn({ defaultRaw: `'[]'` })
+  inLine: string[] = [];
+
   @DayColumn({ nullable: true })
   placedOn: string | null = null;
 

@@ -10,5 +10,6 @@ import { VesselsService } from './vessels.service.js';
   imports: [AuditModule, PartFiguresModule, VesselReachModule],
   controllers: [VesselsController],
   providers: [VesselsService, FleetList],
+  exports: [VesselsService],
 })
 export class VesselsModule {}

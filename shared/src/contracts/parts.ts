@@ -67,6 +67,8 @@ export const fitPartSchema = z.strictObject({
   certificate: partFields.certificate.default(''),
   fittedOn: partFields.fittedOn.default(null),
   notes: partFields.notes.default(''),
+  /** Fits the same into the twin on the other side, which must be there and empty. */
+  alsoOtherSide: z.boolean().default(false),
 });
 export type FitPartInput = z.input<typeof fitPartSchema>;
 

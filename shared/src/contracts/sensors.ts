@@ -34,6 +34,8 @@ const sensorFields = {
   /** Percent of full scale, from its papers. */
   errorPercent: positive.max(50).nullable(),
   scale: sensorScaleSchema.nullable(),
+  /** Places that carry the same load as the measured one, with nothing joining in between. */
+  inLine: z.array(idSchema).max(20),
   placedOn: daySchema.nullable(),
   removedOn: daySchema.nullable(),
   notes: z.string().max(2000),
@@ -45,6 +47,7 @@ export const addSensorSchema = z.strictObject({
   fullScaleKn: sensorFields.fullScaleKn.default(null),
   errorPercent: sensorFields.errorPercent.default(null),
   scale: sensorFields.scale.default(null),
+  inLine: sensorFields.inLine.default([]),
   placedOn: sensorFields.placedOn.default(null),
   removedOn: sensorFields.removedOn.default(null),
   notes: sensorFields.notes.default(''),

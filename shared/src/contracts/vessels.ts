@@ -37,6 +37,13 @@ export const createVesselSchema = z.strictObject({
 });
 export type CreateVesselInput = z.input<typeof createVesselSchema>;
 
+/** A new vessel with the rig of another: positions, geometry and, if wanted, what is fitted, without days and papers. */
+export const createSisterSchema = z.strictObject({
+  name: vesselFields.name,
+  withParts: z.boolean(),
+});
+export type CreateSisterInput = z.infer<typeof createSisterSchema>;
+
 export const updateVesselSchema = z.strictObject({
   version: versionSchema,
   ...z.object(vesselFields).partial().shape,

@@ -60,10 +60,6 @@ export interface PositionGeometry {
   upper: RigPoint;
 }
 
-/** Most masts and spreaders the contract takes; a five-masted vessel with five pairs of spreaders is beyond both. */
-export const MOST_MASTS = 4;
-export const MOST_SPREADERS = 5;
-
 /**
  * A point on a mast's centre line.
  *

@@ -32,6 +32,7 @@ export class Migration20261201130200_register extends Migration {
         full_scale_kn double precision,
         error_percent double precision,
         scale jsonb,
+        in_line jsonb not null default '[]',
         placed_on date,
         removed_on date,
         notes text not null default '',
