@@ -42,6 +42,10 @@ export const paths = {
     '/vessels/:vesselId/positions/:positionId/edit',
     (vesselId: string, positionId: string) => `/vessels/${vesselId}/positions/${positionId}/edit`,
   ),
+  positionHistory: page(
+    '/positions/:positionId/history',
+    (positionId: string) => `/positions/${positionId}/history`,
+  ),
   fitPart: page(
     '/vessels/:vesselId/positions/:positionId/fit',
     (vesselId: string, positionId: string) => `/vessels/${vesselId}/positions/${positionId}/fit`,

@@ -101,6 +101,11 @@ const lightPages: RouteObject[] = [
     (module) => module.LedgerCheckPage,
   ),
   lazyPage(
+    paths.positionHistory.pattern,
+    () => import('../pages/rig/position-history.page'),
+    (module) => module.PositionHistoryPage,
+  ),
+  lazyPage(
     paths.part.pattern,
     () => import('../pages/parts/part.page'),
     (module) => module.PartPage,

@@ -33,7 +33,7 @@ export function rigColumns({
     {
       key: 'position',
       title: 'Position and part',
-      render: ({ label, alias, part }) => (
+      render: ({ id, label, alias, part }) => (
         <span className={styles.place}>
           {part ? (
             <PartMark standing={part.standing} kindOfWire={part.kindOfWire} />
@@ -44,7 +44,16 @@ export function rigColumns({
             {part ? <Link to={paths.part.to(part.id)}>{label}</Link> : label}
             {alias ? <span className="soft"> {alias}</span> : null}
             <span className={styles.second}>
-              {part ? `${part.constructionName}, ${format.diameter(part.diameterMm)}` : 'No part fitted'}
+              {part ? (
+                `${part.constructionName}, ${format.diameter(part.diameterMm)}`
+              ) : (
+                <>
+                  No part fitted,{' '}
+                  <Link to={paths.positionHistory.to(id)} aria-label={`Parts at ${label} through time`}>
+                    earlier parts
+                  </Link>
+                </>
+              )}
             </span>
           </span>
         </span>

@@ -71,12 +71,15 @@ function PartHeading({ part, vessel }: { part: FittedPartDto; vessel: VesselDto 
         </>
       }
       actions={
-        mayUpdate ? (
-          <>
-            <ButtonLink to={paths.editPart.to(part.id)}>Edit part</ButtonLink>
-            <ButtonLink to={paths.removePart.to(part.id)}>Remove part…</ButtonLink>
-          </>
-        ) : undefined
+        <>
+          {mayUpdate && (
+            <>
+              <ButtonLink to={paths.editPart.to(part.id)}>Edit part</ButtonLink>
+              <ButtonLink to={paths.removePart.to(part.id)}>Remove part…</ButtonLink>
+            </>
+          )}
+          <ButtonLink to={paths.positionHistory.to(part.positionId)}>Parts here through time</ButtonLink>
+        </>
       }
     />
   );
