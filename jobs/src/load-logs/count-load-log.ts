@@ -11,13 +11,13 @@ import type { LogStorage } from '@stayledger/backend/storage/log-storage';
 import type { LogFindingDto } from '@stayledger/shared/contracts/load-logs';
 import { ENGINE_VERSION } from '@stayledger/shared/fatigue/engine-version';
 import type { LoadLogConfig, LogFinding } from '@stayledger/shared/fatigue/load-history/load-log';
-import { endJob, type HeldJob, type JobFailure, LeaseLostError, renewLease } from '../common/job-leases.js';
+import { endJob, type HeldJob, type JobFailure } from '../common/job-leases.js';
+import { whileHeld } from '../common/while-held.js';
 import type { CountOutcome, CountedChannel } from './count-outcome.js';
 import type { CountingPool } from './counting-pool.js';
 import { countingStepKn } from './counting-step.js';
 import { zoneOffsets } from './zone-offsets.js';
 
-const RENEW_EVERY_MS = 1000;
 /** Room for counted cycles, shared among the channels of a log, so that a hostile file cannot fill the memory. */
 const CYCLES_IN_MEMORY = 8_000_000;
 const CYCLES_PER_CHANNEL_MAX = 2_000_000;
@@ -45,8 +45,11 @@ export async function countLoadLog(deps: CountingDeps, job: HeldJob, signal: Abo
     return;
   }
   const path = await deps.storage.localPath({ vesselId: job.vesselId, loadLogId: job.subjectId });
-  const outcome = await whileHeld(deps, job, begun.sizeBytes, signal, (options) =>
-    deps.pool.count(path, begun.config, options),
+  const outcome = await whileHeld(deps.em, job, signal, ({ signal: ending, onProgress }) =>
+    deps.pool.count(path, begun.config, {
+      signal: ending,
+      onProgress: (bytesRead) => onProgress(begun.sizeBytes > 0 ? bytesRead / begun.sizeBytes : 0),
+    }),
   );
   if (outcome.ok) await keep(deps, job, begun, outcome);
   else await refuse(deps, job, { code: outcome.code, message: outcome.message });
@@ -117,46 +120,6 @@ function configOf(log: LoadLog, zone: string, parts: readonly FittedPart[]): Loa
     }),
     bounds: { cycles, residuePoints: cycles },
   };
-}
-
-/** Runs the count while renewing the lease each second; losing the lease, or being told to stop, ends the count. */
-async function whileHeld<T>(
-  { em }: Pick<CountingDeps, 'em'>,
-  job: HeldJob,
-  sizeBytes: number,
-  signal: AbortSignal,
-  work: (options: { signal: AbortSignal; onProgress: (bytesRead: number) => void }) => Promise<T>,
-): Promise<T> {
-  const lost = new AbortController();
-  let lostBecause: unknown = null;
-  let progress = 0;
-  let renewing = false;
-  const timer = setInterval(() => {
-    if (renewing) return;
-    renewing = true;
-    renewLease(em.fork(), job, progress)
-      .catch((error: unknown) => {
-        // A database that is away for a moment does not end the count; the lease is longer than the moment.
-        if (!(error instanceof LeaseLostError)) return;
-        lostBecause = error;
-        lost.abort();
-      })
-      .finally(() => {
-        renewing = false;
-      });
-  }, RENEW_EVERY_MS);
-  try {
-    return await work({
-      signal: AbortSignal.any([signal, lost.signal]),
-      onProgress: (bytesRead) => {
-        progress = sizeBytes > 0 ? Math.min(1, bytesRead / sizeBytes) : 0;
-      },
-    });
-  } catch (error) {
-    throw lostBecause ?? error;
-  } finally {
-    clearInterval(timer);
-  }
 }
 
 /** Result, state of the log and end of the job: all or nothing, and nothing without the lease. */
