@@ -27,8 +27,15 @@ async function placesOf(role: string, get: (path: string) => Promise<unknown>): 
   if (role === 'signed-out') return [{ name: 'sign-in', address: '/sign-in' }];
   const profile = { name: `${role}-profile`, address: '/profile' };
   const notFound = { name: `${role}-not-found`, address: '/nowhere' };
-  if (role === 'insurer') return [{ name: 'portfolio', address: '/portfolio' }, profile];
-  if (role === 'administrator') return [{ name: 'administration', address: '/administration' }, profile];
+  const help = { name: `${role}-help`, address: '/help' };
+  if (role === 'insurer') return [{ name: 'portfolio', address: '/portfolio' }, profile, help];
+  if (role === 'administrator') {
+    const views = ['users', 'firms', 'jobs', 'audit'].map((view) => ({
+      name: `administration-${view}`,
+      address: `/administration?view=${view}`,
+    }));
+    return [...views, profile, help];
+  }
   const { items: vessels } = (await get('/api/vessels')) as {
     items: { id: string; counts: { assessed: number; logsWaiting: number } }[];
   };
@@ -43,6 +50,7 @@ async function placesOf(role: string, get: (path: string) => Promise<unknown>): 
       { name: 'owner-vessel', address: `/vessels/${first.id}` },
       { name: 'owner-loads', address: `/vessels/${first.id}/load-logs` },
       { name: 'owner-part', address: `/parts/${part?.id ?? ''}` },
+      help,
       profile,
     ];
   }
@@ -50,6 +58,10 @@ async function placesOf(role: string, get: (path: string) => Promise<unknown>): 
     { name: 'fleet', address: '/fleet' },
     { name: 'register-vessel', address: '/vessels/new' },
     { name: 'reference', address: '/reference' },
+    { name: 'curve', address: '/reference/curves/api-rp-2sk-spiral-strand' },
+    { name: 'add-curve', address: '/reference/curves/new' },
+    { name: 'add-construction', address: '/reference/constructions/new' },
+    help,
     profile,
     notFound,
   ];
