@@ -121,14 +121,35 @@ function pathsOf(issue: z.core.$ZodIssue): string[] {
 }
 
 /**
- * What went wrong, without what somebody typed: database errors carry the statement with its values, so of those only
- * PostgreSQL's own words are kept. A cause is told as well.
+ * What went wrong, without what somebody typed. The words of a database hold statements, values and whole rows ("Failing
+ * row contains …"), so of those only the state and the names of table, column and constraint are kept. A cause is told
+ * as well.
  */
 function textOf(value: unknown): string {
   if (!(value instanceof Error)) return String(value);
-  const words = value instanceof DriverException ? value.message.split(' - ').at(-1) : value.message;
-  const text = `${value.name}: ${words}`;
+  const text = `${value.name}: ${databaseWords(value) ?? value.message}`;
   return value.cause === undefined ? text : `${text} (${textOf(value.cause)})`;
+}
+
+interface DatabaseError {
+  code?: unknown;
+  table?: unknown;
+  column?: unknown;
+  constraint?: unknown;
+}
+
+/** State and names of an error that PostgreSQL sent, whichever library wraps it; null for any other error. */
+function databaseWords(error: Error & DatabaseError): string | null {
+  const { code } = error;
+  const isSent = typeof code === 'string' && /^[0-9A-Z]{5}$/.test(code) && 'severity' in error;
+  // What the driver says by itself stands behind the statement it was about.
+  if (!isSent) return error instanceof DriverException ? (error.message.split(' - ').at(-1) ?? '') : null;
+  const names = (['table', 'column', 'constraint'] as const).flatMap((kind) =>
+    typeof error[kind] === 'string' ? [`${kind} ${error[kind]}`] : [],
+  );
+  // Class 42 speaks of the statement itself: what is missing is a name of ours.
+  const missing = /(?:relation|column|function|type) "?[\w.]+"?[^"]{0,20} does not exist/.exec(error.message);
+  return [`SQLSTATE ${code}`, ...names, ...(code.startsWith('42') && missing ? [missing[0]] : [])].join(', ');
 }
 
 /** The frames of a stack without its first lines, which repeat the message. */
