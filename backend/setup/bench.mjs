@@ -3,7 +3,7 @@ import * as path from 'node:path';
 import { fileURLToPath } from 'node:url';
 
 /**
- * `npm run bench`: builds the shared workspace, which the rows about whole processes start from, and runs the
+ * `npm run bench`: builds the server, which the rows about whole processes start from, and runs the
  * measurements from their sources.
  */
 
@@ -19,7 +19,7 @@ function run(args, stdout) {
 }
 
 // Standard output belongs to the measurements; what the compiler says goes to standard error.
-const built = run([path.join(ROOT, 'node_modules/typescript/bin/tsc'), '-b', 'shared'], 2);
+const built = run([path.join(ROOT, 'node_modules/typescript/bin/tsc'), '-b'], 2);
 process.exitCode =
   built !== 0
     ? built

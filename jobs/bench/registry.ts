@@ -33,5 +33,9 @@ export const REGISTRY: { values: string[]; load: () => Promise<BenchRow> }[] = [
     values: ['calibration90', 'calibrationBias'],
     load: async () => (await import('./calibration.row.js')).calibrationRow,
   },
+  {
+    values: ['apiP95Ratio', 'loopDelayP99Ms'],
+    load: async () => (await import('./api.row.js')).apiRow,
+  },
   { values: ['compareMs'], load: async () => (await import('./compare.row.js')).compareRow },
 ];
