@@ -21,8 +21,8 @@ export function navigationFor(session: SignedInSession): NavigationItem[] {
     session.hasRole('owner') && { label: 'My vessel', to: paths.myVessel.pattern },
     may('portfolio:read') && { label: 'Portfolio', to: paths.portfolio.pattern },
     may('curves:read') && { label: 'Reference data', to: paths.reference.pattern },
-    { label: 'Help', to: paths.help.pattern },
     may('users:read') && { label: 'Administration', to: paths.administration.pattern },
+    { label: 'Help', to: paths.help.pattern },
   ];
   return items.filter((item) => item !== false);
 }

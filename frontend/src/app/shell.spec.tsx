@@ -113,7 +113,7 @@ describe('the navigation', () => {
     ['owner', ['My vessel', 'Reference data']],
     ['insurer', ['Portfolio', 'Reference data']],
     ['administrator', ['Administration']],
-  ])('offers a %s what that role came for, and nothing else', async (role, labels) => {
+  ])('offers a %s what that role came for, help, and nothing else', async (role, labels) => {
     fakeApi({ 'GET /auth/session': reply(sessionSchema, sampleSession(role)) });
     renderApp('/nowhere');
     const navigation = await screen.findByRole('navigation', { name: 'Main' });
@@ -121,7 +121,7 @@ describe('the navigation', () => {
       within(navigation)
         .getAllByRole('link')
         .map((link) => link.textContent),
-    ).toEqual(labels);
+    ).toEqual([...labels, 'Help']);
     expect(screen.getByRole('heading', { name: 'Not found' })).toBeTruthy();
   });
 

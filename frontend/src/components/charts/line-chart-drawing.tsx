@@ -103,12 +103,12 @@ export function LineChartDrawing({
       margin={{ top: 24, right: 32, bottom: 52, left: 64 }}
       xScale={
         xScale === 'log'
-          ? { type: 'log', base: 10, min: logX?.min ?? 'auto', max: logX?.max ?? 'auto' }
+          ? { type: 'log', base: 10, min: logX?.min ?? 'auto', max: logX?.max ?? 'auto', nice: false }
           : { type: 'linear', min: 'auto', max: 'auto' }
       }
       yScale={
         yScale === 'log'
-          ? { type: 'log', base: 10, min: logY?.min ?? 'auto', max: logY?.max ?? 'auto' }
+          ? { type: 'log', base: 10, min: logY?.min ?? 'auto', max: logY?.max ?? 'auto', nice: false }
           : { type: 'linear', min: yMin, max: yMax, nice: yMax === 'auto' }
       }
       enableGridX={false}

@@ -22,6 +22,21 @@ export const GLOSSARY = {
     'A line through test results: how many cycles of a given range a detail stands, low enough that nearly all tested pieces lasted longer.',
   ledger:
     'The account of one fitted part. Entries are added and reversed, never changed or deleted, so each figure can be traced to its recording.',
+  provisional:
+    'The date hangs on an estimate nobody has confirmed, such as a fitting day or a breaking load taken from a table.',
+  position:
+    'A place on the rig, such as the cap shroud on the port side. Parts come and go; the place stays.',
+  'design fatigue factor':
+    'Divides the life a curve gives by 3, 5 or 10: the more that hangs on a part and the harder it is to inspect, the larger.',
+  slope:
+    'How steeply life falls with the range of the load: with a slope of 5, twice the range leaves one part in thirty-two of the cycles.',
+  scatter:
+    'How far apart the lives of equal pieces lay in the tests, as a standard deviation of the logarithm of the cycles.',
+  level:
+    'Where a curve runs among its test results: through the middle of them, or lower, so that most pieces lasted longer.',
+  'cut-off': 'A range below which a curve counts no damage. Where it has none, small ranges count too.',
+  'mean load':
+    'The steady pull a cycle swings about. Some curves already contain it, and then it is not counted twice.',
 } as const;
 
 export type GlossaryWord = keyof typeof GLOSSARY;

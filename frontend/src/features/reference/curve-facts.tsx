@@ -1,5 +1,7 @@
 import type { CurveDto } from '@stayledger/shared/contracts/curves';
 import type { ReactNode } from 'react';
+import type { GlossaryWord } from '../../components/glossary/glossary';
+import { Term } from '../../components/glossary/term';
 import { useFormat } from '../../lib/formatting/use-format';
 import {
   ENVIRONMENT_WORDS,
@@ -14,7 +16,7 @@ import styles from './reference.module.css';
 export function CurveFacts({ curve }: { curve: CurveDto }) {
   const format = useFormat();
   const unit = measureUnit(curve.measure);
-  const facts: [string, ReactNode][] = [
+  const facts: [string, ReactNode, GlossaryWord?][] = [
     ['For', curve.appliesTo],
     ['Measure', `${MEASURE_WORDS[curve.measure]}${unit ? `, ${unit}` : ', without unit'}`],
     [
@@ -22,20 +24,23 @@ export function CurveFacts({ curve }: { curve: CurveDto }) {
       curve.level === 'mean-minus-k-sd'
         ? `mean less ${format.significant(curve.k, 3)} standard deviations`
         : LEVEL_WORDS[curve.level],
+      'level',
     ],
     [
       'Scatter',
       curve.sdLog10N === null
         ? 'the source gives none'
         : `standard deviation of log10 of cycles: ${format.significant(curve.sdLog10N, 3)}`,
+      'scatter',
     ],
     ['Environment', ENVIRONMENT_WORDS[curve.environment]],
-    ['Mean load', curve.meanLoad.reason],
+    ['Mean load', curve.meanLoad.reason, 'mean load'],
     [
       'Cut-off',
       curve.cutOffRange === null
         ? 'none: small ranges count too'
         : `${format.significant(curve.cutOffRange, 3)} ${unit}`,
+      'cut-off',
     ],
     ['Holds', curve.validity.note],
     ['On rigging', curve.analogyNote],
@@ -46,9 +51,9 @@ export function CurveFacts({ curve }: { curve: CurveDto }) {
   ];
   return (
     <dl className={styles.facts}>
-      {facts.map(([name, words]) => (
+      {facts.map(([name, words, term]) => (
         <div key={name} style={{ display: 'contents' }}>
-          <dt>{name}</dt>
+          <dt>{term ? <Term word={term}>{name}</Term> : name}</dt>
           <dd>{words}</dd>
         </div>
       ))}

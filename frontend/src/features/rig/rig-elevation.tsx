@@ -130,7 +130,7 @@ export function RigElevation({ name, rig, todayOn, zone }: RigElevationProps) {
                   className={styles.ground}
                   cx={stay.mark.x}
                   cy={stay.mark.y}
-                  r={frame.markSize * 0.62}
+                  r={frame.markSize * 0.5}
                 />
                 {position.part ? (
                   <g

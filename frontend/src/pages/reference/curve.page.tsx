@@ -63,7 +63,13 @@ function Segments({ curve }: { curve: CurveDto }) {
             numeric: true,
             render: (segment) => format.significant(segment.above, 4),
           },
-          { key: 'm', title: 'm', numeric: true, render: (segment) => format.significant(segment.m, 4) },
+          {
+            key: 'm',
+            title: 'm',
+            help: 'slope',
+            numeric: true,
+            render: (segment) => format.significant(segment.m, 4),
+          },
           {
             key: 'a',
             title: 'log10 a',
