@@ -15,6 +15,7 @@ import { ConstructionsModule } from './constructions/constructions.module.js';
 import { CurvesModule } from './curves/curves.module.js';
 import { PersistenceModule } from './database/persistence.module.js';
 import { ReachInterceptor } from './database/reach.interceptor.js';
+import { DetailChoicesModule } from './detail-choices/detail-choices.module.js';
 import { FirmsModule } from './firms/firms.module.js';
 import { HealthModule } from './health/health.module.js';
 import { JobsModule } from './jobs/jobs.module.js';
@@ -42,6 +43,7 @@ import { VesselsModule } from './vessels/vessels.module.js';
     AuthModule,
     ConstructionsModule,
     CurvesModule,
+    DetailChoicesModule,
     FirmsModule,
     HealthModule,
     JobsModule,

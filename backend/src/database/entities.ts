@@ -8,6 +8,7 @@ import { Firm } from '../firms/firm.entity.js';
 import { Membership } from '../firms/membership.entity.js';
 import { Job } from '../jobs/job.entity.js';
 import { LedgerEntry } from '../ledger/ledger-entry.entity.js';
+import { DetailChoice } from '../life/detail-choice.entity.js';
 import { PartDetail } from '../life/part-detail.entity.js';
 import { PartStanding } from '../life/part-standing.entity.js';
 import { UsagePlan } from '../life/usage-plan.entity.js';
@@ -37,6 +38,7 @@ export const ENTITIES = [
   ChannelMapping,
   Construction,
   Curve,
+  DetailChoice,
   Firm,
   FittedPart,
   IdempotencyKey,

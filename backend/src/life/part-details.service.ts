@@ -1,14 +1,18 @@
 import type { EntityManager } from '@mikro-orm/postgresql';
 import { Injectable } from '@nestjs/common';
+import type { ReferenceCurve } from '@stayledger/shared/fatigue/curves/curve';
 import type { Construction as ConstructionData } from '@stayledger/shared/rig/constructions';
+import { chooseDetail } from '@stayledger/shared/rig/choose-detail';
 import { defaultDetails } from '@stayledger/shared/rig/default-details';
 import type { PartDetail as DescribedDetail } from '@stayledger/shared/rig/part-detail';
 import { positionKind } from '@stayledger/shared/rig/positions';
 import { Clock } from '../common/clock/clock.js';
 import { newId } from '../common/ids/new-id.js';
 import { Construction } from '../constructions/construction.entity.js';
+import { Curve } from '../curves/curve.entity.js';
 import { FittedPart } from '../parts/fitted-part.entity.js';
 import { Position } from '../rig/position.entity.js';
+import { DetailChoice } from './detail-choice.entity.js';
 import { PartDetail } from './part-detail.entity.js';
 import { threadSize } from './reference-rules.js';
 
@@ -22,7 +26,8 @@ export class PartDetailsService {
    * keeps its version; a detail is never deleted, since its account stands.
    */
   async describe(em: EntityManager, part: FittedPart): Promise<void> {
-    const described = await this.detailsOf(em, part);
+    const choices = await em.find(DetailChoice, { fittedPart: part.id });
+    const described = await this.detailsOf(em, part, choices);
     const stored = await em.find(PartDetail, { fittedPart: part.id });
     const now = this.clock.now();
     for (const detail of described) {
@@ -59,25 +64,68 @@ export class PartDetailsService {
     await em.flush();
   }
 
-  private async detailsOf(em: EntityManager, part: FittedPart): Promise<DescribedDetail[]> {
+  /** The details a part has by its description, with what people decided laid over it. Writes nothing. */
+  async detailsOf(
+    em: EntityManager,
+    part: FittedPart,
+    choices: readonly DecidedInputs[],
+  ): Promise<DescribedDetail[]> {
+    const articulationOf = (key: DescribedDetail['key']) =>
+      choices.find((choice) => choice.key === key)?.articulation ?? null;
+    const thread = part.threadSize === null ? null : (threadSize(part.threadSize) ?? null);
     const [id, version] = part.construction;
     const construction = (await em.findOneOrFail(Construction, { id, version })).data as ConstructionData;
     const position = await em.findOneOrFail(Position, part.position);
-    return defaultDetails({
+    const defaults = defaultDetails({
       construction: construction.kind,
       metallicAreaMm2: part.metallicAreaMm2,
       youngMpa: construction.youngGpa * 1000,
       upperTerminal: part.upperTerminal,
       lowerTerminal: part.lowerTerminal,
-      upperArticulation: part.hardware?.upperArticulation ?? undefined,
-      lowerArticulation: part.hardware?.lowerArticulation ?? undefined,
-      thread: part.threadSize === null ? null : (threadSize(part.threadSize) ?? null),
+      upperArticulation: articulationOf('upper-terminal') ?? part.hardware?.upperArticulation ?? undefined,
+      lowerArticulation: articulationOf('lower-terminal') ?? part.hardware?.lowerArticulation ?? undefined,
+      thread,
       pinDiameterMm: part.pinDiameterMm,
       chainplate: null,
       // Of a kind of position nobody described, the loss is taken to drop the mast.
       lossDropsMast: positionKind(position.kind)?.lossDropsMast ?? true,
     });
+    const chosen: DescribedDetail[] = [];
+    for (const detail of defaults) {
+      const choice = choices.find(({ key }) => key === detail.key);
+      chosen.push(
+        choice
+          ? chooseDetail(
+              detail,
+              {
+                curve: choice.curve && (await curveData(em, choice.curve)),
+                designFatigueFactor: choice.designFatigueFactor,
+              },
+              await measureOf(em, detail),
+              detail.kind === 'turnbuckle-thread' ? (thread?.diameterMm ?? null) : null,
+            )
+          : detail,
+      );
+    }
+    return chosen;
   }
+}
+
+/** The part of a stored choice that decides a model. */
+export type DecidedInputs = Pick<DetailChoice, 'key' | 'curve' | 'articulation' | 'designFatigueFactor'>;
+
+async function curveData(em: EntityManager, [id, version]: [string, number]): Promise<ReferenceCurve> {
+  // Reference data pass their schema before they reach the table, and rows of it never change.
+  return (await em.findOneOrFail(Curve, { id, version })).data as ReferenceCurve;
+}
+
+/** Measure of the default curve; null for a detail without one. */
+async function measureOf(
+  em: EntityManager,
+  { curveId, curveVersion }: DescribedDetail,
+): Promise<ReferenceCurve['measure'] | null> {
+  if (curveId === null || curveVersion === null) return null;
+  return (await curveData(em, [curveId, curveVersion])).measure;
 }
 
 type Columns = Pick<
@@ -85,7 +133,8 @@ type Columns = Pick<
   'name' | 'kind' | 'curve' | 'model' | 'designFatigueFactor' | 'explanation' | 'estimates'
 >;
 
-function columnsOf(detail: DescribedDetail): Columns {
+/** A detail as its row holds it. */
+export function columnsOf(detail: DescribedDetail): Columns {
   const { curveId, curveVersion } = detail;
   return {
     name: detail.name,

@@ -18,10 +18,12 @@ export class PartFigures {
   /**
    * Lays out the details anew, brings the account to what they say (by reversing and adding, never by editing), and
    * computes where the part stands. The caller holds the row of the part locked, or has just made it.
+   *
+   * @param why stands beside each entry this reverses
    */
-  async refresh(part: FittedPart, userId: string): Promise<void> {
+  async refresh(part: FittedPart, userId: string, why: string | null = null): Promise<void> {
     await this.details.describe(this.em, part);
-    await this.accounts.settle(this.em, part, userId);
+    await this.accounts.settle(this.em, part, userId, why);
     await this.standings.recompute(this.em, part.id);
   }
 
