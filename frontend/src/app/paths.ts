@@ -42,6 +42,22 @@ export const paths = {
     '/vessels/:vesselId/positions/:positionId/edit',
     (vesselId: string, positionId: string) => `/vessels/${vesselId}/positions/${positionId}/edit`,
   ),
+  startRig: page('/vessels/:vesselId/rig/start', (vesselId: string) => `/vessels/${vesselId}/rig/start`),
+  rigGeometry: page(
+    '/vessels/:vesselId/rig/geometry',
+    (vesselId: string) => `/vessels/${vesselId}/rig/geometry`,
+  ),
+  sisterVessel: page('/vessels/:vesselId/sister', (vesselId: string) => `/vessels/${vesselId}/sister`),
+  sensors: page('/vessels/:vesselId/sensors', (vesselId: string) => `/vessels/${vesselId}/sensors`),
+  addSensor: page('/vessels/:vesselId/sensors/new', (vesselId: string) => `/vessels/${vesselId}/sensors/new`),
+  editSensor: page(
+    '/vessels/:vesselId/sensors/:sensorId/edit',
+    (vesselId: string, sensorId: string) => `/vessels/${vesselId}/sensors/${sensorId}/edit`,
+  ),
+  sensorEvent: page(
+    '/vessels/:vesselId/sensors/:sensorId/check',
+    (vesselId: string, sensorId: string) => `/vessels/${vesselId}/sensors/${sensorId}/check`,
+  ),
   positionHistory: page(
     '/positions/:positionId/history',
     (positionId: string) => `/positions/${positionId}/history`,
@@ -61,7 +77,18 @@ export const paths = {
     '/vessels/:vesselId/ledger-check',
     (vesselId: string) => `/vessels/${vesselId}/ledger-check`,
   ),
+  /** The Re-rig schedule tab of the vessel page. */
+  rerigSchedule: page(
+    '/vessels/:vesselId/rerig-schedule',
+    (vesselId: string) => `/vessels/${vesselId}/rerig-schedule`,
+  ),
+  yardTerms: fixed('/yard-terms'),
   part: page('/parts/:partId', (partId: string) => `/parts/${partId}`),
+  partDetails: page('/parts/:partId/details', (partId: string) => `/parts/${partId}/details`),
+  changeDetail: page(
+    '/parts/:partId/details/:detailKey',
+    (partId: string, detailKey: string) => `/parts/${partId}/details/${detailKey}`,
+  ),
   editPart: page('/parts/:partId/edit', (partId: string) => `/parts/${partId}/edit`),
   removePart: page('/parts/:partId/remove', (partId: string) => `/parts/${partId}/remove`),
 } as const;

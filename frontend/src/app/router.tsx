@@ -34,6 +34,21 @@ const withAntd = (children: RouteObject[]): RouteObject => ({
 /** Pages without antd: light enough for a phone on a poor line. */
 const lightPages: RouteObject[] = [
   lazyPage(
+    paths.startRig.pattern,
+    () => import('../pages/rig/start-rig.page'),
+    (module) => module.StartRigPage,
+  ),
+  lazyPage(
+    paths.sisterVessel.pattern,
+    () => import('../pages/vessels/sister-vessel.page'),
+    (module) => module.SisterVesselPage,
+  ),
+  lazyPage(
+    paths.sensors.pattern,
+    () => import('../pages/sensors/sensors.page'),
+    (module) => module.SensorsPage,
+  ),
+  lazyPage(
     paths.help.pattern,
     () => import('../pages/help/help.page'),
     (module) => module.HelpPage,
@@ -83,7 +98,17 @@ const lightPages: RouteObject[] = [
         () => import('../pages/load-logs/load-log-list.page'),
         (module) => module.LoadLogListPage,
       ),
+      lazyPage(
+        paths.rerigSchedule.pattern,
+        () => import('../pages/rerig-schedules/rerig-schedule.page'),
+        (module) => module.RerigSchedulePage,
+      ),
     ],
+  ),
+  lazyPage(
+    paths.yardTerms.pattern,
+    () => import('../pages/rerig-schedules/yard-terms.page'),
+    (module) => module.YardTermsPage,
   ),
   lazyPage(
     paths.addLoadLog.pattern,
@@ -106,6 +131,16 @@ const lightPages: RouteObject[] = [
     (module) => module.PositionHistoryPage,
   ),
   lazyPage(
+    paths.partDetails.pattern,
+    () => import('../pages/parts/part-details.page'),
+    (module) => module.PartDetailsPage,
+  ),
+  lazyPage(
+    paths.changeDetail.pattern,
+    () => import('../pages/parts/change-detail.page'),
+    (module) => module.ChangeDetailPage,
+  ),
+  lazyPage(
     paths.part.pattern,
     () => import('../pages/parts/part.page'),
     (module) => module.PartPage,
@@ -114,6 +149,26 @@ const lightPages: RouteObject[] = [
 
 /** Pages with forms. */
 const antdPages: RouteObject[] = [
+  lazyPage(
+    paths.rigGeometry.pattern,
+    () => import('../pages/rig/rig-geometry.page'),
+    (module) => module.RigGeometryPage,
+  ),
+  lazyPage(
+    paths.addSensor.pattern,
+    () => import('../pages/sensors/edit-sensor.page'),
+    (module) => module.EditSensorPage,
+  ),
+  lazyPage(
+    paths.editSensor.pattern,
+    () => import('../pages/sensors/edit-sensor.page'),
+    (module) => module.EditSensorPage,
+  ),
+  lazyPage(
+    paths.sensorEvent.pattern,
+    () => import('../pages/sensors/sensor-event.page'),
+    (module) => module.SensorEventPage,
+  ),
   lazyPage(
     paths.addCurve.pattern,
     () => import('../pages/reference/add-curve.page'),

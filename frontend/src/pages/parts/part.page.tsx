@@ -133,6 +133,9 @@ function PartAccount({ life, part, vessel }: { life: PartLifeDto; part: FittedPa
           A detail is a place on the part that can fail by itself. The part is as good as its worst detail.
         </p>
         <DetailsTable life={life} zone={vessel.zone} />
+        <p>
+          <Link to={paths.partDetails.to(part.id)}>What each detail stands on, and who confirmed it</Link>
+        </p>
       </section>
       <section className={styles.section} aria-labelledby="worst-days">
         <h2 id="worst-days">Worst days</h2>
