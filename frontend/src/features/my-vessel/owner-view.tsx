@@ -1,5 +1,6 @@
 import type { PositionDto } from '@stayledger/shared/contracts/rig';
 import type { VesselDto } from '@stayledger/shared/contracts/vessels';
+import type { ReactNode } from 'react';
 import { Link } from 'react-router-dom';
 import { paths } from '../../app/paths';
 import { EmptyState } from '../../components/feedback/empty-state';
@@ -15,10 +16,12 @@ interface OwnerViewProps {
   vessel: VesselDto;
   positions: PositionDto[];
   hasPlan: boolean;
+  /** The planned visit to the yard; left out where none is to be seen. */
+  nextVisit?: ReactNode;
 }
 
 /** What an owner comes for, in the order they ask: what, by when, why, and what to do next. */
-export function OwnerView({ vessel, positions, hasPlan }: OwnerViewProps) {
+export function OwnerView({ vessel, positions, hasPlan, nextVisit }: OwnerViewProps) {
   const format = useFormat();
   const todayOn = clock.todayOn(vessel.zone);
   const fitted = positions.filter((position) => position.part !== null);
@@ -69,13 +72,14 @@ export function OwnerView({ vessel, positions, hasPlan }: OwnerViewProps) {
             ) : null,
           )}
         </ul>
-        {dueNow.length > 0 ? (
+        {dueNow.length > 0 && !nextVisit ? (
           <p>
             {vessel.firmName} looks after this rig: ask them for the cost and for a time in the yard, and
             order wire early.
           </p>
         ) : null}
       </section>
+      {nextVisit}
       <NextStep vessel={vessel} hasPlan={hasPlan} part={shown[0]} />
       <LaterDates positions={dated.filter((position) => !shown.includes(position))} zone={vessel.zone} />
       <NotAssessed positions={fitted} />

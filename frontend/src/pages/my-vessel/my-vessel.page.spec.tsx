@@ -1,12 +1,18 @@
 import { sessionSchema } from '@stayledger/shared/contracts/auth';
 import { usagePlanReplySchema } from '@stayledger/shared/contracts/life';
 import { rigSchema, type PositionDto } from '@stayledger/shared/contracts/rig';
+import {
+  answerPlanSchema,
+  rerigScheduleSchema,
+  type RerigScheduleDto,
+} from '@stayledger/shared/contracts/rerig-schedules';
 import { vesselPageSchema, vesselSchema, type FleetRowDto } from '@stayledger/shared/contracts/vessels';
 import { ROLE_PERMISSIONS } from '@stayledger/shared/permissions/permissions';
 import { screen, within } from '@testing-library/react';
 import { describe, expect, it } from 'vitest';
 import { fakeApi, reply, type FakeRequest } from '../../testing/fake-api';
 import { renderApp } from '../../testing/render-app';
+import { sampleSchedule } from '../../testing/rerig-samples';
 import {
   sampleFleetRow,
   sampleId,
@@ -52,7 +58,10 @@ const unknown = position(22, 'Backstay', {
   due: 'no-date',
 });
 
-function owner(items: PositionDto[], options: { hasPlan?: boolean; rows?: FleetRowDto[] } = {}) {
+function owner(
+  items: PositionDto[],
+  options: { hasPlan?: boolean; rows?: FleetRowDto[]; schedule?: RerigScheduleDto } = {},
+) {
   return fakeApi({
     'GET /auth/session': reply(sessionSchema, sampleSession('owner')),
     'GET /vessels': reply(vesselPageSchema, { items: options.rows ?? [sampleFleetRow()], nextCursor: null }),
@@ -62,9 +71,24 @@ function owner(items: PositionDto[], options: { hasPlan?: boolean; rows?: FleetR
       return reply(vesselSchema, sampleVessel({ id, name, permissions: [...ROLE_PERMISSIONS.owner] }));
     },
     'GET /vessels/:vesselId/rig': reply(rigSchema, { items }),
+    'GET /vessels/:vesselId/rerig-schedule': reply(
+      rerigScheduleSchema,
+      options.schedule ?? sampleSchedule({ plan: null, version: null }),
+    ),
     'GET /vessels/:vesselId/usage-plan': reply(usagePlanReplySchema, {
       plan: options.hasPlan === false ? null : plan,
     }),
+    'POST /vessels/:vesselId/rerig-schedule/answer': ({ body }: FakeRequest) => {
+      const { answer, question } = answerPlanSchema.parse(body);
+      return reply(
+        rerigScheduleSchema,
+        sampleSchedule(
+          answer === 'accept'
+            ? { state: 'accepted', version: 5 }
+            : { state: 'proposed', version: 5, question },
+        ),
+      );
+    },
   });
 }
 
@@ -128,5 +152,29 @@ describe("an owner's page", () => {
     owner([], { rows: [] });
     renderApp('/my-vessel');
     expect(await screen.findByText('No vessel yet')).toBeTruthy();
+  });
+
+  it('shows the next visit with its cost, and takes a question and an acceptance', async () => {
+    const { requests } = owner([inDate], { schedule: sampleSchedule({ state: 'proposed' }) });
+    const { user } = renderApp('/my-vessel');
+    const visit = await screen.findByRole('region', { name: 'The next visit to the yard' });
+    expect(visit.textContent).toContain('the mast is lifted out, ashore');
+    expect(visit.textContent).toContain('About EUR\u00a02717, an estimate by Skerry Rigging');
+    await user.type(within(visit).getByLabelText('Or ask Skerry Rigging first'), 'Can the mast stay up?');
+    await user.click(within(visit).getByRole('button', { name: 'Ask' }));
+    expect(await within(visit).findByText('You asked: Can the mast stay up?')).toBeTruthy();
+    await user.click(within(visit).getByRole('button', { name: 'Accept this plan' }));
+    expect(await within(visit).findByText('You have accepted this plan.')).toBeTruthy();
+    expect(requests.filter(({ method }) => method === 'POST').map(({ body }) => body)).toEqual([
+      { version: 4, answer: 'ask', question: 'Can the mast stay up?' },
+      { version: 5, answer: 'accept' },
+    ]);
+  });
+
+  it('keeps a draft to the yard', async () => {
+    owner([inDate], { schedule: sampleSchedule({ plan: null, draftHidden: true }) });
+    renderApp('/my-vessel');
+    const visit = await screen.findByRole('region', { name: 'The next visit to the yard' });
+    expect(visit.textContent).toContain('Skerry Rigging is drawing up a plan');
   });
 });

@@ -8,6 +8,8 @@ import { PlainSelect } from '../../components/forms/plain-fields';
 import { PageHeading } from '../../components/page-heading/page-heading';
 import { OwnerView } from '../../features/my-vessel/owner-view';
 import styles from '../../features/my-vessel/my-vessel.module.css';
+import { OwnerPlan } from '../../features/rerig-schedules/owner-plan';
+import { rerigQueries } from '../../features/rerig-schedules/rerig-schedules.queries';
 import { rigQueries } from '../../features/rig/rig.queries';
 import { vesselQueries } from '../../features/vessels/vessels.queries';
 
@@ -39,6 +41,7 @@ function OwnedVessel({ vesselId }: { vesselId: string }) {
   const vessel = useQuery(vesselQueries.detail(vesselId));
   const rig = useQuery(rigQueries.ofVessel(vesselId));
   const plan = useQuery(vesselQueries.usagePlan(vesselId));
+  const schedule = useQuery(rerigQueries.ofVessel(vesselId));
   return (
     <QueryView query={vessel} loadingLabel="Opening your vessel">
       {(data) => (
@@ -48,7 +51,16 @@ function OwnedVessel({ vesselId }: { vesselId: string }) {
             {({ items }) => (
               <QueryView query={plan}>
                 {({ plan: stated }) => (
-                  <OwnerView vessel={data} positions={items} hasPlan={stated !== null} />
+                  <OwnerView
+                    vessel={data}
+                    positions={items}
+                    hasPlan={stated !== null}
+                    nextVisit={
+                      schedule.data?.plan || schedule.data?.draftHidden ? (
+                        <OwnerPlan vessel={data} schedule={schedule.data} />
+                      ) : undefined
+                    }
+                  />
                 )}
               </QueryView>
             )}

@@ -53,6 +53,9 @@ export function VesselLayoutPage() {
             {data.permissions.includes('load-logs:read') ? (
               <NavLink to={paths.loadLogs.to(data.id)}>Loads</NavLink>
             ) : null}
+            {data.permissions.includes('rerig:read') ? (
+              <NavLink to={paths.rerigSchedule.to(data.id)}>Re-rig schedule</NavLink>
+            ) : null}
           </nav>
           <Outlet context={data} />
         </>
