@@ -17,7 +17,6 @@ import { LoadLog } from '../load-logs/load-log.entity.js';
 import { StoredSpectrum } from '../load-logs/load-spectrum.entity.js';
 import { LogChannel } from '../load-logs/log-channel.entity.js';
 import { FittedPart } from '../parts/fitted-part.entity.js';
-import { PartPhoto } from '../part-photos/part-photo.entity.js';
 import { RerigPlan } from '../rerig-schedules/rerig-plan.entity.js';
 import { RerigRequest } from '../rerig-schedules/rerig-request.entity.js';
 import { RerigSchedule } from '../rerig-schedules/rerig-schedule.entity.js';
@@ -48,7 +47,6 @@ export const ENTITIES = [
   LogChannel,
   Membership,
   PartDetail,
-  PartPhoto,
   PartStanding,
   Position,
   RerigPlan,

@@ -1,6 +1,8 @@
 import { Body, Controller, Get, HttpCode, Param, Patch, Post } from '@nestjs/common';
 import { ApiTags } from '@nestjs/swagger';
 import {
+  assemblySchema,
+  describedPartSchema,
   fitPartSchema,
   fittedPartSchema,
   removePartSchema,
@@ -17,6 +19,8 @@ class PositionParams extends createZodDto(z.object({ positionId: z.uuid() })) {}
 class FitPartBody extends createZodDto(fitPartSchema) {}
 class UpdatePartBody extends createZodDto(updatePartSchema) {}
 class RemovePartBody extends createZodDto(removePartSchema) {}
+class DescribedPartBody extends createZodDto(describedPartSchema) {}
+class AssemblyReply extends createZodDto(assemblySchema) {}
 class FittedPartReply extends createZodDto(fittedPartSchema) {}
 
 @ApiTags('parts')
@@ -29,6 +33,15 @@ export class PartsController {
   @ZodResponse({ type: FittedPartReply, status: 201 })
   fit(@Me() me: Principal, @Param() { positionId }: PositionParams, @Body() body: FitPartBody) {
     return this.parts.fit(me, positionId, body);
+  }
+
+  /** How strong a part would be as assembled; nothing is stored. */
+  @Post('part-strengths')
+  @HttpCode(200)
+  @RequirePermission('curves:read')
+  @ZodResponse({ type: AssemblyReply, status: 200 })
+  strength(@Me() me: Principal, @Body() body: DescribedPartBody) {
+    return this.parts.strength(me, body);
   }
 
   @Get('parts/:partId')

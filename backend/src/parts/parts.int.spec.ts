@@ -87,6 +87,31 @@ describe('fitting a part', () => {
     expect(part.assembly.unknownElements).toEqual(expect.arrayContaining(['turnbuckle', 'chainplate']));
   });
 
+  it('names the weakest of its hardware, before and after it is stored', async () => {
+    const hardware = {
+      turnbuckle: { there: true, breakingLoadKn: 40 },
+      toggle: { there: false, breakingLoadKn: null },
+      pin: { there: true, breakingLoadKn: 33.5 },
+      chainplate: { there: true, breakingLoadKn: null },
+      upperArticulation: 'both-planes',
+      lowerArticulation: null,
+    };
+    const described = { ...WIRE, upperTerminal: 'swaged', lowerTerminal: 'swaged', hardware };
+    const expected = { breakingLoadKn: 33.5, weakestElement: 'pin', unknownElements: ['chainplate'] };
+    const { body } = await agent
+      .post('/api/part-strengths')
+      .send({ ...described, breakingLoadKn: null })
+      .expect(200);
+    expect(body).toEqual(expected);
+    const { part } = await fitPart(described);
+    expect(part.hardware).toEqual(hardware);
+    expect(part.assembly).toEqual(expected);
+    const upper = part.details.find((detail: { key: string }) => detail.key === 'upper-terminal');
+    const lower = part.details.find((detail: { key: string }) => detail.key === 'lower-terminal');
+    expect(upper.explanation).toContain('both planes');
+    expect(lower.estimates.join(' ')).toContain('0.25 degree');
+  });
+
   it('believes a certificate over the table', async () => {
     const { part } = await fitPart({
       ...WIRE,

@@ -2,6 +2,8 @@ import { EntityManager, LockMode } from '@mikro-orm/postgresql';
 import { Injectable } from '@nestjs/common';
 import type { ConstructionDto } from '@stayledger/shared/contracts/constructions';
 import type {
+  AssemblyDto,
+  DescribedPartInput,
   fitPartSchema,
   FittedPartDto,
   RemovePartInput,
@@ -23,7 +25,7 @@ import { Vessel } from '../vessels/vessel.entity.js';
 import { FittedPart } from './fitted-part.entity.js';
 import { PartFigures } from './part-figures.service.js';
 import { toFittedPartDto } from './part.mapper.js';
-import { areaOf, breakingLoadOf, terminal } from './part-strength.js';
+import { areaOf, assemblyOf, breakingLoadOf, terminal } from './part-strength.js';
 
 type FitInput = z.output<typeof fitPartSchema>;
 /** A whole description, as it is when a part is fitted and after a change was laid over the stored one. */
@@ -112,6 +114,25 @@ export class PartsService {
       data: { positionId, constructionId: input.constructionId, diameterMm: input.diameterMm },
     });
     return part;
+  }
+
+  /** Strength of a part that is still being described. */
+  async strength(me: Principal, input: DescribedPartInput): Promise<AssemblyDto> {
+    const construction = await this.constructions.newest(me, input.constructionId);
+    if (!construction) {
+      throw new InvalidRequestError({ constructionId: ['Choose a construction from the list.'] });
+    }
+    const known = breakingLoadOf(construction, input.diameterMm, input.breakingLoadKn);
+    if (!known) {
+      throw new InvalidRequestError({
+        diameterMm: ['The table has no such diameter; a certificate would do.'],
+      });
+    }
+    const { breakingLoadKn, weakestElement, unknownElements } = assemblyOf({
+      ...input,
+      breakingLoadKn: known.breakingLoadKn,
+    });
+    return { breakingLoadKn, weakestElement, unknownElements };
   }
 
   async get(me: Principal, partId: string): Promise<FittedPartDto> {

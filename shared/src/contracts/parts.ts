@@ -72,6 +72,23 @@ export const fitPartSchema = z.strictObject({
 });
 export type FitPartInput = z.input<typeof fitPartSchema>;
 
+/** A part described so far, to be told how strong it would be as assembled. */
+export const describedPartSchema = z.strictObject({
+  constructionId: partFields.constructionId,
+  diameterMm: partFields.diameterMm,
+  breakingLoadKn: partFields.breakingLoadKn,
+  upperTerminal: partFields.upperTerminal,
+  lowerTerminal: partFields.lowerTerminal,
+  hardware: partFields.hardware,
+});
+export type DescribedPartInput = z.infer<typeof describedPartSchema>;
+export const assemblySchema = z.object({
+  breakingLoadKn: z.number().nullable(),
+  weakestElement: z.string().nullable(),
+  unknownElements: z.array(z.string()),
+});
+export type AssemblyDto = z.infer<typeof assemblySchema>;
+
 export const updatePartSchema = z.strictObject({
   version: versionSchema,
   ...z.object(partFields).partial().shape,
@@ -114,11 +131,7 @@ export const fittedPartSchema = z.object({
   breakingLoadKn: z.number(),
   breakingLoadSource: z.enum(['certificate', 'table', 'table-lower-grade']),
   metallicAreaMm2: z.number(),
-  assembly: z.object({
-    breakingLoadKn: z.number().nullable(),
-    weakestElement: z.string().nullable(),
-    unknownElements: z.array(z.string()),
-  }),
+  assembly: assemblySchema,
   removedOn: daySchema.nullable(),
   removedReason: z.string().nullable(),
   standing: partStandingSchema,

@@ -1,9 +1,9 @@
 import { Migration } from '@mikro-orm/migrations';
 
-const VESSEL_TABLES = ['rig_geometry', 'sensor', 'sensor_event', 'part_photo', 'vessel_standing'] as const;
+const VESSEL_TABLES = ['rig_geometry', 'sensor', 'sensor_event', 'vessel_standing'] as const;
 
 /**
- * The rig's geometry, the hardware of a part, photographs, sensors, and one summary row per vessel.
+ * The rig's geometry, the hardware of a part, sensors, and one summary row per vessel.
  *
  * The summary exists so that a list of thousands of vessels reads one narrow row each. Triggers keep it, because every
  * writer of standings, parts and logs would have to think of it otherwise. What is overdue or due depends on the day
@@ -58,23 +58,6 @@ export class Migration20261201130200_register extends Migration {
       );
       create index sensor_event_sensor on sensor_event (sensor_id, done_on);
       create index sensor_event_vessel on sensor_event (vessel_id);
-
-      create table part_photo (
-        id uuid primary key,
-        vessel_id uuid not null references vessel (id),
-        fitted_part_id uuid not null references fitted_part (id),
-        content_type text not null,
-        size_bytes int not null,
-        sha256 text not null,
-        caption text not null default '',
-        added_by uuid not null references app_user (id),
-        removed_at timestamptz,
-        created_at timestamptz not null,
-        updated_at timestamptz not null,
-        version int not null default 1
-      );
-      create index part_photo_part on part_photo (fitted_part_id);
-      create index part_photo_vessel on part_photo (vessel_id);
 
       create table vessel_standing (
         vessel_id uuid primary key references vessel (id),
@@ -171,7 +154,7 @@ export class Migration20261201130200_register extends Migration {
     `);
 
     this.addSql(`
-      grant select, insert, update on rig_geometry, sensor, part_photo, vessel_standing to stayledger_app;
+      grant select, insert, update on rig_geometry, sensor, vessel_standing to stayledger_app;
       grant select, insert on sensor_event to stayledger_app;
     `);
     for (const table of VESSEL_TABLES) {

@@ -1,10 +1,13 @@
 import type { ConstructionDto } from '@stayledger/shared/contracts/constructions';
 import {
+  describedPartSchema,
   fitPartSchema,
+  type DescribedPartInput,
   type TERMINALS,
   updatePartSchema,
   type FittedPartDto,
 } from '@stayledger/shared/contracts/parts';
+import Checkbox from 'antd/es/checkbox';
 import Form from 'antd/es/form';
 import Radio from 'antd/es/radio';
 import { ContractFormSheet } from '../../components/forms/contract-form-sheet';
@@ -18,10 +21,14 @@ import {
   TextField,
 } from '../../components/forms/fields';
 import { useContractForm } from '../../components/forms/use-contract-form';
+import { check } from '../../lib/contract';
 import { useFormat } from '../../lib/formatting/use-format';
 import { usePreferences } from '../../lib/session';
+import { HardwareFields } from './hardware-fields';
+import { hardwareOf, hardwareValues, type HardwareValues } from './hardware-values';
 import { KIND_OF_WIRE_WORDS, TERMINAL_WORDS, terminalsFor } from './part-words';
 import { fitPart, updatePart } from './rig.mutations';
+import { StrengthPreview } from './strength-preview';
 
 type Terminal = (typeof TERMINALS)[number];
 
@@ -37,13 +44,17 @@ interface PartValues {
   lowerTerminal: Terminal;
   threadSize: string;
   pinDiameterMm: string;
+  hardware: HardwareValues;
   batch: string;
   fittedOn: string;
   notes: string;
+  alsoOtherSide: boolean;
 }
 
 interface PartFormProps {
   positionId: string;
+  /** True where the same place on the other side is there and empty. */
+  twinIsEmpty?: boolean;
   part?: FittedPartDto;
   constructions: ConstructionDto[];
   todayOn: string;
@@ -53,7 +64,7 @@ interface PartFormProps {
 }
 
 export function PartForm(props: PartFormProps) {
-  const { positionId, part, constructions, todayOn, cancelTo, onDone, onReload } = props;
+  const { positionId, twinIsEmpty = false, part, constructions, todayOn, cancelTo, onDone, onReload } = props;
   const format = useFormat();
   const { decimalComma } = usePreferences();
   const sizeOf = (constructionId: string | undefined, diameterMm: string | undefined) =>
@@ -75,6 +86,7 @@ export function PartForm(props: PartFormProps) {
       lowerTerminal: values.lowerTerminal,
       threadSize: values.threadSize.trim() || null,
       pinDiameterMm: figureOf(values.pinDiameterMm),
+      hardware: hardwareOf(values.hardware, format.forceToKn),
       batch: values.batch.trim(),
       certificate: values.certificate.trim(),
       fittedOn: values.fittedOn || null,
@@ -83,7 +95,10 @@ export function PartForm(props: PartFormProps) {
   };
   const fitting = useContractForm({
     contract: fitPartSchema,
-    toInput: fields,
+    toInput: (values: PartValues) => ({
+      ...fields(values),
+      alsoOtherSide: twinIsEmpty && values.alsoOtherSide,
+    }),
     send: (input, key) => fitPart(positionId, input, key),
     onDone,
   });
@@ -98,6 +113,8 @@ export function PartForm(props: PartFormProps) {
   const constructionId = Form.useWatch('constructionId', form) ?? part?.constructionId;
   const diameter = Form.useWatch('diameterMm', form);
   const source = Form.useWatch('breakingLoadSource', form);
+  // Renders anew with every change; the values themselves also hold what a hidden field keeps.
+  const described = Form.useWatch((values: PartValues) => values, form);
   const construction = constructions.find(({ id }) => id === constructionId);
   const size = sizeOf(constructionId, diameter);
   const storedSize = constructions
@@ -126,9 +143,13 @@ export function PartForm(props: PartFormProps) {
         lowerTerminal: part?.lowerTerminal ?? 'unknown',
         threadSize: part?.threadSize ?? '',
         pinDiameterMm: figureText(part?.pinDiameterMm, decimalComma),
+        hardware: hardwareValues(part?.hardware ?? null, (kn) =>
+          figureText(format.forceFromKn(kn), decimalComma),
+        ),
         batch: part?.batch ?? '',
         fittedOn: part?.fittedOn ?? '',
         notes: part?.notes ?? '',
+        alsoOtherSide: false,
       }}
       submitLabel={part ? 'Save part' : 'Fit this part'}
       cancelTo={cancelTo}
@@ -215,6 +236,12 @@ export function PartForm(props: PartFormProps) {
           hint="Unknown, the pin is not assessed."
         />
       </FieldPair>
+      <HardwareFields unit={format.forceUnit} />
+      <StrengthPreview
+        input={
+          described?.constructionId ? describedPart(fields(form.getFieldsValue(true) as PartValues)) : null
+        }
+      />
       <FieldPair>
         <DayField
           name="fittedOn"
@@ -226,8 +253,28 @@ export function PartForm(props: PartFormProps) {
       </FieldPair>
       <TextField name="batch" label="Batch" maxLength={120} />
       <TextField name="notes" label="Notes" lines={2} maxLength={4000} />
+      {twinIsEmpty && !part ? (
+        <Form.Item name="alsoOtherSide" valuePropName="checked">
+          <Checkbox>Fit the same on the other side</Checkbox>
+        </Form.Item>
+      ) : null}
     </ContractFormSheet>
   );
+}
+
+/** The fields the strength hangs on, as soon as they can be meant. */
+function describedPart(fields: unknown): DescribedPartInput | null {
+  const { constructionId, diameterMm, breakingLoadKn, upperTerminal, lowerTerminal, hardware } =
+    fields as DescribedPartInput;
+  const checked = check(describedPartSchema, {
+    constructionId,
+    diameterMm,
+    breakingLoadKn,
+    upperTerminal,
+    lowerTerminal,
+    hardware,
+  });
+  return checked.ok ? checked.value : null;
 }
 
 function constructionChoices(constructions: ConstructionDto[]) {

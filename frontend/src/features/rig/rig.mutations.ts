@@ -1,5 +1,7 @@
 import {
+  assemblySchema,
   fittedPartSchema,
+  type DescribedPartInput,
   type FitPartInput,
   type RemovePartInput,
   type UpdatePartInput,
@@ -29,4 +31,9 @@ export function updatePart(partId: string, input: UpdatePartInput) {
 
 export function removePart(partId: string, input: RemovePartInput, idempotencyKey: string) {
   return apiSend('POST', `/parts/${partId}/remove`, fittedPartSchema, { body: input, idempotencyKey });
+}
+
+/** How strong a part would be as described; stores nothing. */
+export function partStrength(input: DescribedPartInput) {
+  return apiSend('POST', '/part-strengths', assemblySchema, { body: input });
 }

@@ -1,6 +1,6 @@
 import { sessionSchema } from '@stayledger/shared/contracts/auth';
 import { constructionListSchema, type ConstructionDto } from '@stayledger/shared/contracts/constructions';
-import { fitPartSchema } from '@stayledger/shared/contracts/parts';
+import { assemblySchema, fitPartSchema } from '@stayledger/shared/contracts/parts';
 import { rigSchema } from '@stayledger/shared/contracts/rig';
 import { screen, waitFor } from '@testing-library/react';
 import { describe, expect, it } from 'vitest';
@@ -62,7 +62,14 @@ function fitting(position = samplePosition({ part: null })) {
     {
       'GET /auth/session': reply(sessionSchema, sampleSession('rigger')),
       'GET /vessels/:vesselId/rig': reply(rigSchema, { items: [position] }),
-      'GET /constructions': reply(constructionListSchema, { items: [strand, rod].map((one) => ({ ...one, firm: null })) }),
+      'GET /constructions': reply(constructionListSchema, {
+        items: [strand, rod].map((one) => ({ ...one, firm: null })),
+      }),
+      'POST /part-strengths': reply(assemblySchema, {
+        breakingLoadKn: 64.8,
+        weakestElement: 'upper terminal',
+        unknownElements: ['lower terminal'],
+      }),
       'POST /positions/:positionId/parts': refusal(503, 'unavailable', 'Not now.'),
     },
     { 'POST /positions/:positionId/parts': fitPartSchema },
@@ -95,6 +102,8 @@ describe('fitting a part', () => {
       lowerTerminal: 'unknown',
       threadSize: null,
       pinDiameterMm: 12.7,
+      hardware: null,
+      alsoOtherSide: false,
       batch: '',
       certificate: '',
       fittedOn: null,

@@ -1,3 +1,4 @@
+import { isTwin } from '@stayledger/shared/rig/load-basis';
 import { useQuery } from '@tanstack/react-query';
 import { Link, useNavigate, useParams } from 'react-router-dom';
 import { paths } from '../../app/paths';
@@ -48,6 +49,7 @@ export function FitPartPage() {
                 {({ items: known }) => (
                   <PartForm
                     positionId={position.id}
+                    twinIsEmpty={items.some((other) => isTwin(position, other) && other.part === null)}
                     constructions={known}
                     todayOn={clock.todayOn(browserZone())}
                     cancelTo={back}

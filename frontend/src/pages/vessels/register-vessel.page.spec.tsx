@@ -1,5 +1,5 @@
 import { sessionSchema, type SessionDto } from '@stayledger/shared/contracts/auth';
-import { rigSchema } from '@stayledger/shared/contracts/rig';
+import { loadBasesSchema, rigSchema } from '@stayledger/shared/contracts/rig';
 import { createVesselSchema, vesselPageSchema, vesselSchema } from '@stayledger/shared/contracts/vessels';
 import { screen, waitFor } from '@testing-library/react';
 import { describe, expect, it } from 'vitest';
@@ -19,6 +19,8 @@ function register(answers: FakeReply[], session: SessionDto = sampleSession('rig
       'POST /vessels': () => answers.shift() ?? refusal(500, 'internal', 'More requests than expected.'),
       'GET /vessels/:vesselId': reply(vesselSchema, sampleVessel()),
       'GET /vessels/:vesselId/rig': reply(rigSchema, { items: [] }),
+      'GET /vessels/:vesselId/rig/geometry': refusal(503, 'unavailable', 'Not now.'),
+      'GET /vessels/:vesselId/load-bases': reply(loadBasesSchema, { items: [] }),
     },
     { 'POST /vessels': createVesselSchema },
   );

@@ -1,6 +1,6 @@
 import { sessionSchema } from '@stayledger/shared/contracts/auth';
 import { stateUsagePlanSchema, usagePlanReplySchema } from '@stayledger/shared/contracts/life';
-import { rigSchema } from '@stayledger/shared/contracts/rig';
+import { loadBasesSchema, rigSchema } from '@stayledger/shared/contracts/rig';
 import { vesselSchema } from '@stayledger/shared/contracts/vessels';
 import { screen, waitFor } from '@testing-library/react';
 import { describe, expect, it } from 'vitest';
@@ -23,6 +23,8 @@ function plans(stored: { sailingHoursPerYear: number; version: number } | null) 
       'GET /auth/session': reply(sessionSchema, sampleSession('rigger')),
       'GET /vessels/:vesselId': reply(vesselSchema, sampleVessel()),
       'GET /vessels/:vesselId/rig': reply(rigSchema, { items: [] }),
+      'GET /vessels/:vesselId/rig/geometry': refusal(503, 'unavailable', 'Not now.'),
+      'GET /vessels/:vesselId/load-bases': reply(loadBasesSchema, { items: [] }),
       'GET /vessels/:vesselId/usage-plan': () => reply(usagePlanReplySchema, { plan: dto() }),
       'PUT /vessels/:vesselId/usage-plan': ({ body }: FakeRequest) => {
         const input = stateUsagePlanSchema.parse(body);

@@ -1,5 +1,10 @@
 import { sessionSchema } from '@stayledger/shared/contracts/auth';
-import { rigSchema, type PositionDto } from '@stayledger/shared/contracts/rig';
+import {
+  loadBasesSchema,
+  rigSchema,
+  type LoadBasesDto,
+  type PositionDto,
+} from '@stayledger/shared/contracts/rig';
 import { vesselSchema } from '@stayledger/shared/contracts/vessels';
 import { ROLE_PERMISSIONS, type Role } from '@stayledger/shared/permissions/permissions';
 import { screen, within } from '@testing-library/react';
@@ -10,11 +15,13 @@ import { sampleId, samplePosition, sampleSession, sampleStanding, sampleVessel }
 
 const PATH = `/vessels/${sampleId(10)}`;
 
-function rig(items: PositionDto[], role: Role = 'rigger') {
+function rig(items: PositionDto[], role: Role = 'rigger', bases: LoadBasesDto['items'] = []) {
   fakeApi({
     'GET /auth/session': reply(sessionSchema, sampleSession(role)),
     'GET /vessels/:vesselId': reply(vesselSchema, sampleVessel({ permissions: [...ROLE_PERMISSIONS[role]] })),
     'GET /vessels/:vesselId/rig': reply(rigSchema, { items }),
+    'GET /vessels/:vesselId/rig/geometry': refusal(503, 'unavailable', 'Not now.'),
+    'GET /vessels/:vesselId/load-bases': reply(loadBasesSchema, { items: bases }),
   });
 }
 
@@ -116,5 +123,20 @@ describe('the rig of a vessel', () => {
     expect(alert.textContent).toContain('Not found');
     expect(alert.textContent).not.toContain('Request');
     expect(screen.queryByRole('button', { name: 'Try again' })).toBeNull();
+  });
+
+  it('says where loads can come from and what would better it', async () => {
+    rig([positions[2]], 'rigger', [
+      {
+        positionId: sampleId(22),
+        basis: 'none',
+        throughLabel: null,
+        words: 'No sensor reaches it.',
+        improve: 'A load pin in its turnbuckle would give it a load basis.',
+      },
+    ]);
+    renderApp(PATH);
+    const table = await screen.findByRole('table', { name: /Where the loads/ });
+    expect(within(table).getByRole('row', { name: /Bobstay/ }).textContent).toContain('load pin');
   });
 });

@@ -8,10 +8,13 @@ import { ButtonLink } from '../../components/plain-button/plain-button';
 import { CsvDownload } from '../../components/tables/csv-download';
 import { DataTable } from '../../components/tables/data-table';
 import { drawnRig } from '../../features/rig/drawn-rig';
+import { geometryQueries, measuredRig } from '../../features/rig/geometry.queries';
 import { RigElevation } from '../../features/rig/rig-elevation';
 import { rigColumns } from '../../features/rig/rig-table.columns';
 import { rigQueries } from '../../features/rig/rig.queries';
 import styles from '../../features/rig/rig.module.css';
+import { LoadBasisTable } from '../../features/sensors/load-basis-table';
+import { sensorQueries } from '../../features/sensors/sensors.queries';
 import { useVessel } from '../../features/vessels/use-vessel';
 import { clock } from '../../lib/clock';
 import { useFormat } from '../../lib/formatting/use-format';
@@ -19,6 +22,8 @@ import { useFormat } from '../../lib/formatting/use-format';
 export function VesselRigPage() {
   const vessel = useVessel();
   const rig = useQuery(rigQueries.ofVessel(vessel.id));
+  const geometry = useQuery(geometryQueries.ofVessel(vessel.id));
+  const bases = useQuery(sensorQueries.loadBases(vessel.id));
   const format = useFormat();
   const mayUpdate = vessel.permissions.includes('rig:update');
   const todayOn = clock.todayOn(vessel.zone);
@@ -27,7 +32,10 @@ export function VesselRigPage() {
     [format, todayOn, vessel.zone, mayUpdate],
   );
   const addPosition = mayUpdate ? (
-    <ButtonLink to={paths.addPosition.to(vessel.id)}>Add a position</ButtonLink>
+    <>
+      <ButtonLink to={paths.startRig.to(vessel.id)}>Add many places at once</ButtonLink>
+      <ButtonLink to={paths.addPosition.to(vessel.id)}>Add a position</ButtonLink>
+    </>
   ) : null;
   return (
     <QueryView query={rig} loadingLabel="Opening the rig">
@@ -35,8 +43,8 @@ export function VesselRigPage() {
         items.length === 0 ? (
           <EmptyState title="No positions yet" actions={addPosition}>
             <p>
-              The places of this rig will stand here in rig order, each with the part fitted in it. Add a
-              position, such as the port cap shroud, then fit a part.
+              The places of this rig will stand here in rig order, each with the part fitted in it. Start from
+              the type of the rig or a file, or add a position, such as the port cap shroud; then fit a part.
             </p>
           </EmptyState>
         ) : (
@@ -44,7 +52,7 @@ export function VesselRigPage() {
             <p className={styles.summary}>{rigSummary(items)}</p>
             <RigElevation
               name={vessel.name}
-              rig={drawnRig(vessel, items)}
+              rig={drawnRig(vessel, items, measuredRig(geometry.data))}
               todayOn={todayOn}
               zone={vessel.zone}
             />
@@ -57,11 +65,23 @@ export function VesselRigPage() {
             />
             <div className={styles.actions}>
               {addPosition}
+              <ButtonLink to={paths.sensors.to(vessel.id)}>Sensors</ButtonLink>
+              {mayUpdate ? (
+                <ButtonLink to={paths.rigGeometry.to(vessel.id)}>Correct the geometry</ButtonLink>
+              ) : null}
+              {vessel.permissions.includes('vessels:register') ? (
+                <ButtonLink to={paths.sisterVessel.to(vessel.id)}>Register a sister vessel</ButtonLink>
+              ) : null}
               {vessel.permissions.includes('ledger:check') && (
                 <ButtonLink to={paths.ledgerCheck.to(vessel.id)}>Check the ledger</ButtonLink>
               )}
               <CsvDownload name={`rig of ${vessel.name}`} rows={items} columns={columns} />
             </div>
+            <section className={styles.bases}>
+              <QueryView query={bases} loadingLabel="Looking where loads come from">
+                {({ items: found }) => <LoadBasisTable bases={found} positions={items} />}
+              </QueryView>
+            </section>
           </>
         )
       }
