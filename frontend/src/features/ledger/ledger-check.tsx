@@ -74,7 +74,9 @@ function Found({
         columns={columns}
         rowKey={(row) => `${row.partId} ${row.entryId ?? row.detailName ?? ''} ${row.kind ?? ''} ${row.what}`}
       />
-      <CsvDownload name={caption.toLowerCase()} rows={rows} columns={columns} />
+      <p>
+        <CsvDownload name={caption.toLowerCase()} rows={rows} columns={columns} />
+      </p>
     </>
   );
 }

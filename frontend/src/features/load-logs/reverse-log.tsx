@@ -36,7 +36,7 @@ export function ReverseLog({ log }: { log: LoadLogDto }) {
   }
   return (
     <form className={styles.form} onSubmit={onReverse} noValidate aria-label="Take this log back">
-      <p className={styles.reason}>
+      <p>
         Every entry this log made is reversed by a further entry; none is deleted. The allowance used and the
         dates of the parts above fall back to what the other logs say, which may be less than they have
         carried. The log then waits for review again: post it anew, read it with another mapping, or set it

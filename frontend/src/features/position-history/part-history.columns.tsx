@@ -13,7 +13,7 @@ export function partHistoryColumns(format: Formatter): DataTableColumn<PartOfPos
       title: 'Part',
       render: (part) => (
         <>
-          <PartMark standing={part.standing} kindOfWire={part.kindOfWire} />{' '}
+          <PartMark standing={asShown(part)} kindOfWire={part.kindOfWire} />{' '}
           <Link to={paths.part.to(part.id)}>
             {part.constructionName}, {format.diameter(part.diameterMm)}
           </Link>
@@ -69,4 +69,9 @@ export function partHistoryColumns(format: Formatter): DataTableColumn<PartOfPos
       value: (part) => part.batch,
     },
   ];
+}
+
+/** Nothing is due of a part that came off. */
+function asShown({ standing, removedOn }: PartOfPositionDto): PartOfPositionDto['standing'] {
+  return removedOn === null ? standing : { ...standing, due: 'no-date' };
 }

@@ -43,7 +43,9 @@ export function PositionHistoryPage() {
                 columns={columns}
                 rowKey={(part) => part.id}
               />
-              <CsvDownload name={`parts of ${label}`} rows={parts} columns={columns} />
+              <p>
+                <CsvDownload name={`parts of ${label}`} rows={parts} columns={columns} />
+              </p>
             </>
           )}
         </>
