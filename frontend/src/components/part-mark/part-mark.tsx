@@ -65,7 +65,7 @@ export function PartMark({ standing, kindOfWire, size = 18, alternative, ...cond
           clipPath={`url(#${clip}rim)`}
         />
       )}
-      {mark.wires.length > 0 && !empty ? (
+      {mark.wires.length > 0 && !empty && !calendarOnly && !suspended ? (
         <>
           <g className={styles.wireAbove} clipPath={mark.levelY === null ? undefined : `url(#${clip}above)`}>
             {mark.wires.map((wire, index) => (
@@ -89,7 +89,7 @@ export function PartMark({ standing, kindOfWire, size = 18, alternative, ...cond
       <path
         className={styles.rim}
         d={mark.rimPath}
-        strokeWidth={due ? Math.max(2, mark.strokeWidth) : mark.strokeWidth}
+        strokeWidth={rimWidth(rim, size, due ? Math.max(2, mark.strokeWidth) : mark.strokeWidth)}
         strokeDasharray={dashes(rim, size)}
         strokeLinecap={rim === 'dotted' ? 'round' : 'butt'}
       />
@@ -134,8 +134,18 @@ export function PartMark({ standing, kindOfWire, size = 18, alternative, ...cond
   );
 }
 
+/** Dashes and dots grow with the mark, up to a size at which more would leave the rim open. */
+function rimUnit(size: number): number {
+  return Math.min(Math.max(size / 24, 1), 3);
+}
+
+/** Dots are as broad as they are long: on a large mark a hairline of dots would not be seen. */
+function rimWidth(rim: MarkRim, size: number, width: number): number {
+  return rim === 'dotted' ? Math.max(width, 1.5 * rimUnit(size)) : width;
+}
+
 function dashes(rim: MarkRim, size: number): string | undefined {
-  const unit = Math.max(size / 24, 1);
+  const unit = rimUnit(size);
   if (rim === 'dashed') return `${3 * unit} ${2 * unit}`;
   if (rim === 'dotted') return `0.1 ${2.6 * unit}`;
   return undefined;

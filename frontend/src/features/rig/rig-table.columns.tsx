@@ -49,7 +49,7 @@ export function rigColumns({
               ) : (
                 <>
                   No part fitted,{' '}
-                  <Link to={paths.positionHistory.to(id)} aria-label={`Parts at ${label} through time`}>
+                  <Link to={paths.positionHistory.to(id)} aria-label={`Earlier parts at ${label}`}>
                     earlier parts
                   </Link>
                 </>
