@@ -128,7 +128,7 @@ const REFUSED: Refused[] = [
     name: '10,000 columns',
     contents: `time,cap_port_kN${',c'.repeat(10_000)}\n${lines.slice(1).join('\n')}`,
     code: 'too-many-columns',
-    says: ['Line 1', 'more than 2000 columns', 'Export the time and the load columns only'],
+    says: ['Line 1', 'more than 1000 columns', 'Export the time and the load columns only'],
   },
   {
     name: 'a cell of 10 MB',

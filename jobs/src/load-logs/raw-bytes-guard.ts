@@ -1,9 +1,10 @@
+import { LOG_COLUMNS_MAX } from '@stayledger/shared/contracts/load-logs';
+
 const NUL = 0;
 const LF = 10;
 const CR = 13;
 /** Far beyond any line of a log, well within memory. */
 const LINE_BYTES_MAX = 1024 ** 2;
-const COLUMNS_MAX = 2000;
 const DELIMITERS = [',', ';', '\t', '|'].map((delimiter) => delimiter.charCodeAt(0));
 
 /** Bytes that no log holds, and where: counted from the first unpacked byte. */
@@ -59,11 +60,11 @@ export class RawBytesGuard {
         return;
       }
       const delimiter = DELIMITERS.indexOf(byte);
-      if (delimiter >= 0 && ++counts[delimiter] >= COLUMNS_MAX) {
+      if (delimiter >= 0 && ++counts[delimiter] >= LOG_COLUMNS_MAX) {
         throw new BadBytesError(
           'too-many-columns',
           0,
-          `This line has more than ${COLUMNS_MAX} columns. Export the time and the load columns only.`,
+          `This line has more than ${LOG_COLUMNS_MAX} columns. Export the time and the load columns only.`,
         );
       }
     }

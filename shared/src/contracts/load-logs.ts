@@ -16,6 +16,9 @@ export type LoadLogState = (typeof LOAD_LOG_STATES)[number];
 
 export const LOAD_UNITS = ['kN', 'N', 'kgf', 'daN', 'lbf', 'tf'] as const;
 
+/** Wider tables are refused before they are read: a form with a line for each column would no longer answer. */
+export const LOG_COLUMNS_MAX = 1000;
+
 /** Slower than this, rows are no record of loads, and a long file would end in a far century. */
 export const LOG_RATE_MIN_HZ = 0.0001;
 

@@ -1,5 +1,12 @@
 import styles from './first-rows.module.css';
 
+const SHOWN_LENGTH = 60;
+
+/** A cell of a broken file can be as long as the file. */
+function shortened(text: string): string {
+  return text.length > SHOWN_LENGTH ? `${text.slice(0, SHOWN_LENGTH)}…` : text;
+}
+
 /** The first rows as they stand in the file, so that a person sees at once whether it was read rightly. */
 export function FirstRows({
   columns,
@@ -16,7 +23,7 @@ export function FirstRows({
           <tr>
             {columns.map((column, index) => (
               <th key={index} scope="col">
-                {column}
+                {shortened(column)}
               </th>
             ))}
           </tr>
@@ -25,7 +32,7 @@ export function FirstRows({
           {rows.map((row, index) => (
             <tr key={index}>
               {columns.map((_, cell) => (
-                <td key={cell}>{row[cell] ?? ''}</td>
+                <td key={cell}>{shortened(row[cell] ?? '')}</td>
               ))}
             </tr>
           ))}

@@ -1,3 +1,4 @@
+import { LOG_COLUMNS_MAX } from '@stayledger/shared/contracts/load-logs';
 import { recogniseLog, type LogProblem } from '@stayledger/shared/fatigue/load-history/recognise-log';
 import type { RecognisedLog } from './mapping-draft';
 import { FileHeadError, readHead } from './read-head';
@@ -34,6 +35,11 @@ export async function recogniseFile(file: Blob): Promise<RecognisedFile> {
   const hopeless = found.problems.find((problem) => HOPELESS.includes(problem.code));
   if (hopeless) {
     throw new FileHeadError([hopeless.message, MENDS[hopeless.code]].filter(Boolean).join(' '));
+  }
+  if (found.columns.length > LOG_COLUMNS_MAX) {
+    throw new FileHeadError(
+      `Line ${Math.max(1, found.headerLine)} has ${found.columns.length} columns, and at most ${LOG_COLUMNS_MAX} can be matched. Export the time and the load columns only, and choose that file.`,
+    );
   }
   const time = found.time;
   const timeColumn = time === null ? null : found.columns[time.index];
