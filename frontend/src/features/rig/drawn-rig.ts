@@ -1,9 +1,5 @@
-import type { PositionDto } from '@stayledger/shared/contracts/rig';
-import type { VesselDto } from '@stayledger/shared/contracts/vessels';
+import type { DrawnRigDto, PositionDto } from '@stayledger/shared/contracts/rig';
 import type { PositionGeometry, RigGeometry } from '@stayledger/shared/rig/geometry';
-import { suggestGeometry } from '@stayledger/shared/rig/templates/suggest-geometry';
-import { suggestPositionGeometry } from '@stayledger/shared/rig/templates/suggest-position-geometry';
-import { templateForRigType } from '@stayledger/shared/rig/templates/template-keys';
 
 export interface DrawnPosition {
   position: PositionDto;
@@ -20,28 +16,18 @@ export interface DrawnRig {
   suggested: boolean;
 }
 
-/** What was measured on a vessel: hull and masts, and the runs of positions by their id. */
-export interface MeasuredRig {
-  geometry: RigGeometry | null;
-  runs: ReadonlyMap<string, PositionGeometry | null>;
-}
-
-const NOTHING_MEASURED: MeasuredRig = { geometry: null, runs: new Map() };
-
-/** The rig as it can be drawn: what was measured, and the usual proportions of the type where nothing was. */
+/** The positions of a rig sorted into what can be drawn and what cannot. */
 export function drawnRig(
-  vessel: Pick<VesselDto, 'rigType' | 'lengthM'>,
-  positions: readonly PositionDto[],
-  measured: MeasuredRig = NOTHING_MEASURED,
+  { source, geometry, positions }: DrawnRigDto,
+  rig: readonly PositionDto[],
 ): DrawnRig {
-  const geometry =
-    measured.geometry ?? suggestGeometry(templateForRigType(vessel.rigType), { lengthM: vessel.lengthM });
+  const runs = new Map(positions.map(({ positionId, geometry: run }) => [positionId, run]));
   const drawn: DrawnPosition[] = [];
   const notDrawn: PositionDto[] = [];
-  for (const position of positions) {
-    const run = measured.runs.get(position.id) ?? suggestPositionGeometry(position, geometry);
+  for (const position of rig) {
+    const run = runs.get(position.id);
     if (run) drawn.push({ position, geometry: run });
     else notDrawn.push(position);
   }
-  return { geometry, drawn, notDrawn, suggested: measured.geometry === null };
+  return { geometry, drawn, notDrawn, suggested: source === 'suggested' };
 }

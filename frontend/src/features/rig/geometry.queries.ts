@@ -1,7 +1,6 @@
-import { drawnRigSchema, type DrawnRigDto, type SaveGeometryInput } from '@stayledger/shared/contracts/rig';
+import { drawnRigSchema, type SaveGeometryInput } from '@stayledger/shared/contracts/rig';
 import { queryOptions } from '@tanstack/react-query';
 import { apiGet, apiSend } from '../../lib/api-client';
-import type { MeasuredRig } from './drawn-rig';
 
 export const geometryQueries = {
   ofVessel: (vesselId: string) =>
@@ -13,13 +12,4 @@ export const geometryQueries = {
 
 export function saveGeometry(vesselId: string, input: SaveGeometryInput) {
   return apiSend('PUT', `/vessels/${vesselId}/rig/geometry`, drawnRigSchema, { body: input });
-}
-
-/** What the server knows of the rig's geometry, as the elevation takes it. */
-export function measuredRig(drawn: DrawnRigDto | undefined): MeasuredRig | undefined {
-  if (!drawn) return undefined;
-  return {
-    geometry: drawn.source === 'entered' ? drawn.geometry : null,
-    runs: new Map(drawn.positions.map(({ positionId, geometry }) => [positionId, geometry])),
-  };
 }

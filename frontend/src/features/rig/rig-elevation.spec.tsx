@@ -1,4 +1,8 @@
-import type { PositionDto } from '@stayledger/shared/contracts/rig';
+import type { DrawnRigDto, PositionDto } from '@stayledger/shared/contracts/rig';
+import type { VesselDto } from '@stayledger/shared/contracts/vessels';
+import { suggestGeometry } from '@stayledger/shared/rig/templates/suggest-geometry';
+import { suggestPositionGeometry } from '@stayledger/shared/rig/templates/suggest-position-geometry';
+import { templateForRigType } from '@stayledger/shared/rig/templates/template-keys';
 import { screen, within } from '@testing-library/react';
 import { describe, expect, it } from 'vitest';
 import { renderWithin } from '../../testing/render-app';
@@ -16,10 +20,31 @@ const positions = [
   place(23, { kind: 'halyard', side: 'centre', label: 'Halyard', alias: null, part: null }),
 ];
 
+/** The reply for a vessel nobody has measured. */
+function usual({ rigType, lengthM }: VesselDto, items: PositionDto[]): DrawnRigDto {
+  const geometry = suggestGeometry(templateForRigType(rigType), { lengthM });
+  return {
+    source: 'suggested',
+    version: null,
+    geometry,
+    positions: items.map((position) => ({
+      positionId: position.id,
+      source: 'suggested',
+      geometry: suggestPositionGeometry(position, geometry),
+      lengthM: null,
+    })),
+  };
+}
+
 function show(items = positions) {
   const vessel = sampleVessel();
   return renderWithin(
-    <RigElevation name={vessel.name} rig={drawnRig(vessel, items)} todayOn="2026-12-01" zone="Europe/Oslo" />,
+    <RigElevation
+      name={vessel.name}
+      rig={drawnRig(usual(vessel, items), items)}
+      todayOn="2026-12-01"
+      zone="Europe/Oslo"
+    />,
   );
 }
 
@@ -75,7 +100,7 @@ describe('the drawing of a rig', () => {
     const { user } = renderWithin(
       <RigElevation
         name={vessel.name}
-        rig={drawnRig(vessel, [...positions, overdue])}
+        rig={drawnRig(usual(vessel, [...positions, overdue]), [...positions, overdue])}
         todayOn="2026-12-01"
         zone="Europe/Oslo"
       />,

@@ -8,7 +8,7 @@ import { ButtonLink } from '../../components/plain-button/plain-button';
 import { CsvDownload } from '../../components/tables/csv-download';
 import { DataTable } from '../../components/tables/data-table';
 import { drawnRig } from '../../features/rig/drawn-rig';
-import { geometryQueries, measuredRig } from '../../features/rig/geometry.queries';
+import { geometryQueries } from '../../features/rig/geometry.queries';
 import { RigElevation } from '../../features/rig/rig-elevation';
 import { rigColumns } from '../../features/rig/rig-table.columns';
 import { rigQueries } from '../../features/rig/rig.queries';
@@ -50,12 +50,16 @@ export function VesselRigPage() {
         ) : (
           <>
             <p className={styles.summary}>{rigSummary(items)}</p>
-            <RigElevation
-              name={vessel.name}
-              rig={drawnRig(vessel, items, measuredRig(geometry.data))}
-              todayOn={todayOn}
-              zone={vessel.zone}
-            />
+            <QueryView query={geometry} loadingLabel="Drawing the rig">
+              {(found) => (
+                <RigElevation
+                  name={vessel.name}
+                  rig={drawnRig(found, items)}
+                  todayOn={todayOn}
+                  zone={vessel.zone}
+                />
+              )}
+            </QueryView>
             <DataTable
               caption={`Positions and parts of ${vessel.name}`}
               stackOnPhone
