@@ -27,8 +27,12 @@ export const GUIDES: readonly Guide[] = [
     steps: [
       {
         title: 'Register the vessel and her rig',
-        text: 'List each place on the rig, then fit the part that hangs there: construction, diameter, ends, thread, fitting day. What you do not know stays empty; the page says what is assumed instead, and that is always the weaker figure.',
+        text: 'Start from the type of the rig, from a file, or from a sister vessel; then fit the part that hangs at each place: construction, diameter, ends, thread, fitting day. What you do not know stays empty; the page says what is assumed instead, and that is always the weaker figure.',
         link: { to: paths.registerVessel.pattern, label: 'Register a vessel' },
+      },
+      {
+        title: 'List the sensors',
+        text: 'Which pin, link or gauge measures which place, from when, and when its zero was last checked. A part nobody measures may be mirrored from the other side; the rig page says where the loads of each part come from and what would better it.',
       },
       {
         title: 'Add a load log',
@@ -42,6 +46,10 @@ export const GUIDES: readonly Guide[] = [
       {
         title: 'Read the dates with the rule beside them',
         text: 'The earliest rule governs and is named. A low allowance never puts off the calendar rule, a limit of the builder or one of the insurer.',
+      },
+      {
+        title: 'Plan the visits',
+        text: 'The re-rig schedule of a vessel puts parts that fall due into as few visits as pay. Each task says why it falls there.',
       },
       {
         title: 'Add what your firm knows',
@@ -92,6 +100,10 @@ export const GUIDES: readonly Guide[] = [
       {
         title: 'Send in what your logger recorded',
         text: 'You may add a load log yourself. The firm that looks after your rig reviews it before it counts.',
+      },
+      {
+        title: 'See what is planned',
+        text: 'The page of your vessel has a re-rig schedule: which visit takes which parts, why then, and what it is expected to cost.',
       },
       {
         title: 'Keep looking at the rig',
