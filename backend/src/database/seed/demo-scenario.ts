@@ -1,4 +1,5 @@
 import type { TERMINALS } from '@stayledger/shared/contracts/parts';
+import type { RIG_STATES, SENSOR_KINDS } from '@stayledger/shared/contracts/sensors';
 import type { RIG_TYPES, USE_KINDS } from '@stayledger/shared/contracts/vessels';
 import type { Role } from '@stayledger/shared/permissions/permissions';
 import type { Side } from '@stayledger/shared/rig/positions';
@@ -36,6 +37,9 @@ export const DEMO_PEOPLE: readonly DemoPerson[] = [
   person(5, 'Sigrid Moldal', 'administrator', 'service'),
 ];
 
+/** Whoever looks after the demo's rigs day by day. */
+export const DEMO_RIGGER = DEMO_PEOPLE[1];
+
 export interface DemoPart {
   constructionId: string;
   diameterMm: number;
@@ -57,6 +61,20 @@ export interface DemoPosition {
   part: DemoPart | null;
 }
 
+/** A sensor of the demo, placed on one of the vessel's positions by its number in the list. */
+export interface DemoSensor {
+  name: string;
+  kind: (typeof SENSOR_KINDS)[number];
+  position: number;
+  fullScaleKn: number;
+  /** Left out: nobody has its papers. */
+  errorPercent?: number;
+  placedMonthsAgo: number;
+  /** Months ago and state of the rig; left out: never checked. */
+  zeroCheck?: { monthsAgo: number; readingKn: number; rigState: (typeof RIG_STATES)[number] };
+  calibratedMonthsAgo?: number;
+}
+
 export interface DemoVessel {
   id: string;
   name: string;
@@ -72,6 +90,7 @@ export interface DemoVessel {
   ownerId: string | null;
   sharedWithInsurer: boolean;
   positions: readonly DemoPosition[];
+  sensors?: readonly DemoSensor[];
 }
 
 const ZONE = 'Europe/Oslo';
@@ -101,6 +120,39 @@ const cutter: DemoVessel = {
     ['backstay', 'centre', strand(8, 18.3, 92, 'swaged', 'M12', 12.7)],
     ['halyard', 'centre', null],
   ]),
+  sensors: [
+    {
+      name: 'Link F',
+      kind: 'link',
+      position: 0,
+      fullScaleKn: 100,
+      errorPercent: 0.5,
+      placedMonthsAgo: 20,
+      zeroCheck: { monthsAgo: 3, readingKn: 0.2, rigState: 'slack' },
+      calibratedMonthsAgo: 20,
+    },
+    {
+      name: 'Pin P',
+      kind: 'pin',
+      position: 2,
+      fullScaleKn: 80,
+      errorPercent: 1,
+      placedMonthsAgo: 20,
+      zeroCheck: { monthsAgo: 3, readingKn: 6.4, rigState: 'dock-tune' },
+      calibratedMonthsAgo: 20,
+    },
+    {
+      name: 'Pin S',
+      kind: 'pin',
+      position: 3,
+      fullScaleKn: 80,
+      errorPercent: 1,
+      placedMonthsAgo: 20,
+      zeroCheck: { monthsAgo: 9, readingKn: 0.4, rigState: 'unstepped' },
+      calibratedMonthsAgo: 31,
+    },
+    { name: 'Pin B', kind: 'pin', position: 6, fullScaleKn: 80, placedMonthsAgo: 6 },
+  ],
 };
 
 /** Sail-training schooner: galvanised wire, old papers. */

@@ -18,18 +18,23 @@ import { FittedPart } from '../../parts/fitted-part.entity.js';
 import { areaOf, breakingLoadOf } from '../../parts/part-strength.js';
 import { Position } from '../../rig/position.entity.js';
 import { positionLabel } from '../../rig/position-label.js';
+import { SensorEvent } from '../../sensors/sensor-event.entity.js';
+import { Sensor } from '../../sensors/sensor.entity.js';
 import { User } from '../../users/user.entity.js';
 import { VesselAccess, type AccessRole } from '../../vessels/vessel-access.entity.js';
 import { Vessel } from '../../vessels/vessel.entity.js';
 import { inReach } from '../reach.js';
 import { ServiceSetting } from '../service-setting.entity.js';
 import { seedOwnReference } from './demo-reference.js';
+import { seedSchedules } from './demo-schedules.js';
 import {
   DEMO_FIRMS,
   DEMO_PEOPLE,
+  DEMO_RIGGER,
   DEMO_VESSELS,
   type DemoPart,
   type DemoPosition,
+  type DemoSensor,
   type DemoVessel,
 } from './demo-scenario.js';
 
@@ -44,13 +49,20 @@ export async function seedDemo(
   em: EntityManager,
   clock: Clock,
 ): Promise<{ vessels: number; users: number } | null> {
-  const parties = DEMO_VESSELS.map(({ id }) => `vessel:${id}`);
+  const parties = [...DEMO_VESSELS.map(({ id }) => `vessel:${id}`), `firm:${DEMO_FIRMS.riggers.id}`];
   return inReach(em, { parties }, async (inner) => {
     if ((await inner.count(User)) > 0) return null;
     const firstDayOn = clock.todayIn(DEMO_VESSELS[0].zone);
     await seedPeople(inner, clock, firstDayOn);
     await seedOwnReference(inner, DEMO_FIRMS.riggers.id, clock.now());
     for (const vessel of DEMO_VESSELS) await seedVessel(inner, clock, vessel, firstDayOn);
+    await seedSchedules(inner, {
+      firmId: DEMO_FIRMS.riggers.id,
+      riggerId: DEMO_RIGGER.id,
+      vesselIds: DEMO_VESSELS.slice(0, 2).map(({ id }) => id),
+      firstDayOn,
+      now: clock.now(),
+    });
     return { vessels: DEMO_VESSELS.length, users: DEMO_PEOPLE.length };
   });
 }
@@ -101,7 +113,7 @@ async function seedVessel(
 ): Promise<void> {
   const now = clock.now();
   const stamps = { createdAt: now, updatedAt: now };
-  const { positions, plannedHoursPerYear, ownerId, sharedWithInsurer, ...fields } = demo;
+  const { positions, sensors = [], plannedHoursPerYear, ownerId, sharedWithInsurer, ...fields } = demo;
   em.persist(em.create(Vessel, { ...fields, firm: DEMO_FIRMS.riggers.id, ...stamps }));
   await em.flush();
 
@@ -128,6 +140,51 @@ async function seedVessel(
   }
   await em.flush();
   for (const position of positions) await seedPosition(em, clock, demo, position, firstDayOn);
+  for (const sensor of sensors) await seedSensor(em, clock, demo, sensor, firstDayOn);
+}
+
+async function seedSensor(
+  em: EntityManager,
+  clock: Clock,
+  vessel: DemoVessel,
+  sensor: DemoSensor,
+  firstDayOn: string,
+): Promise<void> {
+  const now = clock.now();
+  const id = newId();
+  const { name, kind, fullScaleKn, errorPercent = null, zeroCheck, calibratedMonthsAgo } = sensor;
+  em.persist(
+    em.create(Sensor, {
+      id,
+      vessel: vessel.id,
+      name,
+      kind,
+      position: vessel.positions[sensor.position].id,
+      fullScaleKn,
+      errorPercent,
+      scale: null,
+      inLine: [],
+      placedOn: addMonths(firstDayOn, -sensor.placedMonthsAgo),
+      removedOn: null,
+      notes: '',
+      createdAt: now,
+      updatedAt: now,
+    }),
+  );
+  await em.flush();
+  const event = { vessel: vessel.id, sensor: id, note: '', recordedBy: DEMO_RIGGER.id, createdAt: now };
+  if (calibratedMonthsAgo !== undefined) {
+    const doneOn = addMonths(firstDayOn, -calibratedMonthsAgo);
+    em.persist(em.create(SensorEvent, { ...event, id: newId(), kind: 'calibration', doneOn }));
+  }
+  if (zeroCheck) {
+    const { monthsAgo, readingKn, rigState } = zeroCheck;
+    const doneOn = addMonths(firstDayOn, -monthsAgo);
+    em.persist(
+      em.create(SensorEvent, { ...event, id: newId(), kind: 'zero-check', doneOn, readingKn, rigState }),
+    );
+  }
+  await em.flush();
 }
 
 async function seedPosition(

@@ -14,7 +14,7 @@ export function SensorList({ sensors, mayUpdate }: { sensors: readonly SensorDto
     <ul className={styles.list}>
       {sensors.map((sensor) => (
         <li key={sensor.id} className={styles.sensor}>
-          <h3>{sensor.name}</h3>
+          <h2>{sensor.name}</h2>
           <p>
             {SENSOR_KIND_WORDS[sensor.kind]}
             {sensor.positionLabel ? `, measures ${sensor.positionLabel}` : ', not placed'}

@@ -5,7 +5,8 @@ import { QueryView } from '../../components/feedback/query-view';
 import { PageHeading } from '../../components/page-heading/page-heading';
 import { SensorEventForm } from '../../features/sensors/sensor-event-form';
 import { sensorQueries } from '../../features/sensors/sensors.queries';
-import { browserZone, clock } from '../../lib/clock';
+import { vesselQueries } from '../../features/vessels/vessels.queries';
+import { clock } from '../../lib/clock';
 import { useRefresh } from '../../lib/use-refresh';
 import { NotFoundPage } from '../not-found/not-found.page';
 
@@ -13,32 +14,37 @@ export function SensorEventPage() {
   const { vesselId = '', sensorId = '' } = useParams();
   const navigate = useNavigate();
   const refresh = useRefresh();
+  const vesselQuery = useQuery(vesselQueries.detail(vesselId));
   const sensors = useQuery(sensorQueries.ofVessel(vesselId));
   const back = paths.sensors.to(vesselId);
   return (
-    <QueryView query={sensors}>
-      {({ items }) => {
-        const sensor = items.find(({ id }) => id === sensorId);
-        if (!sensor) return <NotFoundPage />;
-        return (
-          <>
-            <PageHeading
-              title={`Record a check of ${sensor.name}`}
-              above={<Link to={back}>Sensors</Link>}
-              below="What is recorded here is kept as it is. A mistake is set right by recording it again."
-            />
-            <SensorEventForm
-              sensorId={sensor.id}
-              todayOn={clock.todayOn(browserZone())}
-              cancelTo={back}
-              onDone={async () => {
-                await refresh();
-                await navigate(back);
-              }}
-            />
-          </>
-        );
-      }}
+    <QueryView query={vesselQuery}>
+      {(vessel) => (
+        <QueryView query={sensors}>
+          {({ items }) => {
+            const sensor = items.find(({ id }) => id === sensorId);
+            if (!sensor) return <NotFoundPage />;
+            return (
+              <>
+                <PageHeading
+                  title={`Record a check of ${sensor.name}`}
+                  above={<Link to={back}>Sensors</Link>}
+                  below="What is recorded here is kept as it is. A mistake is set right by recording it again."
+                />
+                <SensorEventForm
+                  sensorId={sensor.id}
+                  todayOn={clock.todayOn(vessel.zone)}
+                  cancelTo={back}
+                  onDone={async () => {
+                    await refresh();
+                    await navigate(back);
+                  }}
+                />
+              </>
+            );
+          }}
+        </QueryView>
+      )}
     </QueryView>
   );
 }
