@@ -12,6 +12,7 @@ import { ThrottlingModule } from './common/http/throttling.js';
 import { IdempotencyInterceptor } from './common/idempotency/idempotency.interceptor.js';
 import { ConfigModule } from './config/config.module.js';
 import { ConstructionsModule } from './constructions/constructions.module.js';
+import { CurveSpreadModule } from './curve-spread/curve-spread.module.js';
 import { CurvesModule } from './curves/curves.module.js';
 import { PersistenceModule } from './database/persistence.module.js';
 import { ReachInterceptor } from './database/reach.interceptor.js';
@@ -42,6 +43,7 @@ import { VesselsModule } from './vessels/vessels.module.js';
     AuditModule,
     AuthModule,
     ConstructionsModule,
+    CurveSpreadModule,
     CurvesModule,
     DetailChoicesModule,
     FirmsModule,

@@ -4,6 +4,7 @@ import type {
   DetailChoicesDto,
   DetailWithChoiceDto,
 } from '@stayledger/shared/contracts/detail-choices';
+import type { CurveSpreadDto } from '@stayledger/shared/contracts/curve-spread';
 import type { LedgerCheckDto, LedgerEntryDto } from '@stayledger/shared/contracts/ledger';
 import type { PartLifeDto } from '@stayledger/shared/contracts/life';
 import {
@@ -63,6 +64,31 @@ async function usedOf({ agent, part }: LoggedVessel, name: string): Promise<numb
   const life = (await agent.get(`/api/parts/${part.id}/life`).expect(200)).body as PartLifeDto;
   return life.details.find((detail) => detail.name === name)?.allowanceUsed ?? NaN;
 }
+
+describe('the strand curves side by side', () => {
+  it('puts the history of a wire on each, the used one with the amount of its account', async () => {
+    const logged = await withLog();
+    const url = `/api/parts/${logged.part.id}/curve-spread`;
+    const spread = (await logged.agent.get(url).expect(200)).body as CurveSpreadDto;
+    expect(spread.items.map(({ curveId }) => curveId).sort()).toEqual([
+      'api-rp-2sk-spiral-strand',
+      'api-rp-2sk-stranded-rope',
+      'dnv-os-e301-spiral-rope',
+      'en-1993-1-11-150',
+    ]);
+    const used = spread.items.filter(({ isUsed }) => isUsed);
+    expect(used.map(({ curveId }) => curveId)).toEqual(['en-1993-1-11-150']);
+    expect(used[0].allowance / (await usedOf(logged, 'free length'))).toBeCloseTo(1, 12);
+    const allowances = spread.items.map(({ allowance }) => allowance);
+    expect(allowances).toEqual([...allowances].sort((a, b) => b - a));
+  });
+
+  it('has nothing to put side by side before any log', async () => {
+    const fresh = await createLoggedVessel(app);
+    const url = `/api/parts/${fresh.part.id}/curve-spread`;
+    expect((await fresh.agent.get(url).expect(200)).body).toMatchObject({ items: [], loggedHours: 0 });
+  });
+});
 
 describe('deciding about the inputs of a detail', () => {
   it('shows by how much the allowance would change, then changes it by that, reversing what stood', async () => {

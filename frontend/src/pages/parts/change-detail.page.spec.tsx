@@ -1,4 +1,5 @@
 import { sessionSchema } from '@stayledger/shared/contracts/auth';
+import { curveSpreadSchema } from '@stayledger/shared/contracts/curve-spread';
 import {
   chooseDetailSchema,
   detailChoiceEffectSchema,
@@ -54,6 +55,12 @@ function open(path: string, given: { role?: Role; item?: DetailWithChoiceDto; pu
       'GET /auth/session': reply(sessionSchema, sampleSession(role)),
       'GET /parts/:id': reply(fittedPartSchema, samplePart()),
       'GET /parts/:id/detail-choices': choices,
+      'GET /parts/:id/curve-spread': reply(curveSpreadSchema, {
+        partId: sampleId(30),
+        loggedHours: 0,
+        designFatigueFactor: 5,
+        items: [],
+      }),
       'GET /vessels/:id': reply(vesselSchema, sampleVessel({ permissions: [...ROLE_PERMISSIONS[role]] })),
       'POST /parts/:id/detail-choices/:key/preview': reply(detailChoiceEffectSchema, EFFECT),
       'PUT /parts/:id/detail-choices/:key': given.put ?? choices,

@@ -5,6 +5,8 @@ import { EmptyState } from '../../components/feedback/empty-state';
 import { QueryView } from '../../components/feedback/query-view';
 import { PageHeading } from '../../components/page-heading/page-heading';
 import { DataTable } from '../../components/tables/data-table';
+import { CurveSpread } from '../../features/curve-spread/curve-spread';
+import { curveSpreadQueries } from '../../features/curve-spread/curve-spread.queries';
 import { detailChoiceColumns } from '../../features/detail-choices/detail-choices.columns';
 import { detailChoiceQueries } from '../../features/detail-choices/detail-choices.queries';
 import { rigQueries } from '../../features/rig/rig.queries';
@@ -17,6 +19,7 @@ export function PartDetailsPage() {
   const format = useFormat();
   const part = useQuery(rigQueries.part(partId));
   const choices = useQuery(detailChoiceQueries.ofPart(partId));
+  const spread = useQuery(curveSpreadQueries.ofPart(partId));
   const vessel = useQuery({
     ...vesselQueries.detail(part.data?.vesselId ?? ''),
     enabled: part.data !== undefined,
@@ -61,6 +64,12 @@ export function PartDetailsPage() {
               </QueryView>
             )}
           </QueryView>
+          {fitted.kindOfWire === 'strand' && (
+            <section aria-labelledby="strand-curves">
+              <h2 id="strand-curves">Strand curves side by side</h2>
+              <QueryView query={spread}>{(loaded) => <CurveSpread spread={loaded} />}</QueryView>
+            </section>
+          )}
         </>
       )}
     </QueryView>
