@@ -142,6 +142,12 @@ function causesOf(before: PlanInput, after: PlanInput): PlanCause[] {
   return causes;
 }
 
+/** Whatever order the fields of an object come in: a plan that was stored comes back with another one. */
 function sameJson(one: unknown, other: unknown): boolean {
-  return JSON.stringify(one) === JSON.stringify(other);
+  return JSON.stringify(one, inOrder) === JSON.stringify(other, inOrder);
+}
+
+function inOrder(_key: string, value: unknown): unknown {
+  if (value === null || typeof value !== 'object' || Array.isArray(value)) return value;
+  return Object.fromEntries(Object.entries(value).sort(([first], [second]) => (first < second ? -1 : 1)));
 }
