@@ -119,10 +119,13 @@ export class RerigSchedulesService {
     return { vessel, plan, state: schedule?.state ?? 'draft' };
   }
 
-  /** An accepted plan keeps every part within its date; the least-late plan is shown, not accepted. */
+  /**
+   * An accepted plan lets no part run past its date. What was past it before is no fault of the plan, which takes it as
+   * soon as may be.
+   */
   private async refuseLatePlan(schedule: RerigSchedule): Promise<void> {
     const { plan } = await this.em.findOneOrFail(RerigPlan, schedule.plan ?? '');
-    if (plan.lateDays > 0) {
+    if (plan.lateTasks.some(({ reason }) => reason !== 'overdue-already')) {
       throw new StateConflictError(
         'This plan runs past a date and cannot be accepted as it stands. Ask the rigger what can be done sooner.',
       );

@@ -8,7 +8,7 @@ import { PlainButton } from '../../components/plain-button/plain-button';
 import { useFormat } from '../../lib/formatting/use-format';
 import styles from './rerig-schedule.module.css';
 import { useScheduleStep } from './rerig-schedules.mutations';
-import { money, windowLabel } from './schedule-words';
+import { isAcceptable, money, windowLabel } from './schedule-words';
 
 const KIND_IN_PLAIN_WORDS = {
   aloft: 'a rigger works aloft and the mast stays up',
@@ -53,11 +53,37 @@ export function OwnerPlan({ vessel, schedule }: { vessel: VesselDto; schedule: R
       ) : (
         <p>No visit is planned within the years looked at.</p>
       )}
+      <LateWork schedule={schedule} zone={vessel.zone} />
       <Answer vessel={vessel} schedule={schedule} />
       <p>
         <Link to={paths.rerigSchedule.to(vessel.id)}>See the whole plan and why</Link>
       </p>
     </section>
+  );
+}
+
+/** A plan is no leave to sail on with a part that is past its date. */
+function LateWork({ schedule, zone }: { schedule: RerigScheduleDto; zone: string }) {
+  const format = useFormat();
+  const late = schedule.plan?.plan.lateTasks ?? [];
+  if (late.length === 0) return null;
+  return (
+    <div className={styles.late}>
+      {late.map(({ taskId, name, dueOn, doneOn }) => (
+        <p key={taskId}>
+          {name}: due by {format.dueDay(dueOn, schedule.todayOn, zone)},{' '}
+          {doneOn === null
+            ? 'and not done in this plan'
+            : `done in this plan by ${format.dueDay(doneOn, schedule.todayOn, zone)}`}
+          .
+        </p>
+      ))}
+      <p>
+        {isAcceptable(schedule.plan?.plan)
+          ? `That is past its date, and the soonest the yard can. Ask ${schedule.firmName} what holds until then.`
+          : `This plan runs past a date and cannot be accepted as it stands. Ask ${schedule.firmName} what can be done sooner.`}
+      </p>
+    </div>
   );
 }
 
@@ -85,15 +111,17 @@ function Answer({ vessel, schedule }: { vessel: VesselDto; schedule: RerigSchedu
   return (
     <>
       {step.error ? <Attention role="alert">{step.error.message}</Attention> : null}
-      <div className={styles.steps}>
-        <PlainButton
-          weight="primary"
-          disabled={step.isPending}
-          onClick={() => step.mutate({ step: 'answer', input: { version, answer: 'accept' } })}
-        >
-          Accept this plan
-        </PlainButton>
-      </div>
+      {isAcceptable(schedule.plan?.plan) ? (
+        <div className={styles.steps}>
+          <PlainButton
+            weight="primary"
+            disabled={step.isPending}
+            onClick={() => step.mutate({ step: 'answer', input: { version, answer: 'accept' } })}
+          >
+            Accept this plan
+          </PlainButton>
+        </div>
+      ) : null}
       {schedule.question !== null ? (
         <p role="status">You asked: {schedule.question}</p>
       ) : (

@@ -14,7 +14,7 @@ import { useScheduleStep } from './rerig-schedules.mutations';
 import { calendarUrl, isPlanning } from './rerig-schedules.queries';
 import { ScheduleCsv } from './schedule-csv';
 import { ScheduleSettings } from './schedule-settings';
-import { money, STATE_WORDS } from './schedule-words';
+import { isAcceptable, money, STATE_WORDS } from './schedule-words';
 import { TimeLine } from './time-line';
 
 const NEXT_STEP = {
@@ -37,7 +37,7 @@ export function RerigScheduleView({ vessel, schedule }: { vessel: VesselDto; sch
   const next = NEXT_STEP[schedule.state];
   const planAnew = () => step.mutate({ step: 'plan', input: { version } });
   return (
-    <>
+    <div className={styles.schedule}>
       {step.error ? <Attention role="alert">{step.error.message}</Attention> : null}
       <PlanningState schedule={schedule} />
       {shown === null ? (
@@ -156,7 +156,7 @@ export function RerigScheduleView({ vessel, schedule }: { vessel: VesselDto; sch
           </p>
         </>
       ) : null}
-    </>
+    </div>
   );
 }
 
@@ -194,7 +194,10 @@ function LateWork({ schedule, zone }: { schedule: RerigScheduleDto; zone: string
           </li>
         ))}
       </ul>
-      <p>This is the plan with the fewest days past dates. It cannot be accepted as it stands.</p>
+      <p>
+        This is the plan with the fewest days past dates.
+        {isAcceptable(schedule.plan?.plan) ? '' : ' It cannot be accepted as it stands.'}
+      </p>
     </section>
   );
 }

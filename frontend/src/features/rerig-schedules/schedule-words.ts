@@ -39,6 +39,11 @@ export function money(minor: number, currency: string, format: Pick<Formatter, '
   return `${currency}\u00a0${format.number(minor / minorPerUnit(currency))}`;
 }
 
+/** What was past its date before there was a plan no plan can help; what a plan itself lets run late, it can. */
+export function isAcceptable(plan: RerigPlanDto['plan'] | undefined): boolean {
+  return plan !== undefined && plan.lateTasks.every(({ reason }) => reason === 'overdue-already');
+}
+
 /** What a window is called. */
 export function windowLabel(plan: Pick<RerigPlanDto, 'windows'>, windowId: string): string {
   return plan.windows.find(({ id }) => id === windowId)?.label ?? windowId;

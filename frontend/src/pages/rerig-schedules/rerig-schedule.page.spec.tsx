@@ -130,15 +130,15 @@ describe('the re-rig schedule tab', () => {
       dueOn: '2026-02-01',
       doneOn: '2027-03-01',
       lateDays: 393,
-      reason: 'overdue-already' as const,
-      words: 'It was overdue when the plan was made.',
+      reason: 'no-window-in-time' as const,
+      words: 'No window of the yard opens in time.',
     };
     schedules(
       sampleSchedule({ plan: { ...plan, plan: { ...plan.plan, lateDays: 393, lateTasks: [lateTask] } } }),
     );
     renderApp(PATH);
     const late = await screen.findByRole('region', { name: 'Past its date' });
-    expect(within(late).getByText(/It was overdue/)).toBeTruthy();
+    expect(within(late).getByText(/No window of the yard/)).toBeTruthy();
     expect(late.textContent).toContain('It cannot be accepted');
   });
 
