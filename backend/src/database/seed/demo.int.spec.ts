@@ -44,6 +44,14 @@ describe('the demo', () => {
     expect(body.items[0].governing.due).toBe('overdue');
   });
 
+  it('has a yard with prices of its own, and a first plan that waits to be made', async () => {
+    const rigger = await app.signIn({ email: emailOf('rigger') }, DEMO_PASSWORD);
+    const { body: terms } = await rigger.get('/api/yard-terms').expect(200);
+    expect(terms).toMatchObject({ currency: 'NOK', version: 1, terms: { closures: [{}] } });
+    const { body } = await rigger.get(`/api/vessels/${DEMO_VESSELS[0].id}/rerig-schedule`).expect(200);
+    expect(body).toMatchObject({ plan: null, planning: { kind: 'plan-rerig', state: 'queued' } });
+  });
+
   it('shows the owner one vessel and the insurer no rig', async () => {
     const ownerTab = await app.signIn({ email: emailOf('owner') }, DEMO_PASSWORD);
     const { body } = await ownerTab.get('/api/vessels').expect(200);
