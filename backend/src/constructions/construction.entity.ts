@@ -1,9 +1,13 @@
-import { Entity, PrimaryKey, PrimaryKeyProp } from '@mikro-orm/core';
+import { Entity, Index, PrimaryKey, PrimaryKeyProp } from '@mikro-orm/core';
 import { InstantColumn, JsonColumn, References, TextColumn } from '../database/columns.js';
 import { Firm } from '../firms/firm.entity.js';
 
 /** A construction of the reference data. Rows are never changed: a correction is a new version. */
 @Entity({ tableName: 'construction' })
+@Index({
+  name: 'construction_firm',
+  expression: 'create index construction_firm on construction (firm_id) where firm_id is not null',
+})
 export class Construction {
   [PrimaryKeyProp]?: ['id', 'version'];
 

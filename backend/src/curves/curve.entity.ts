@@ -1,9 +1,13 @@
-import { Entity, PrimaryKey, PrimaryKeyProp } from '@mikro-orm/core';
+import { Entity, Index, PrimaryKey, PrimaryKeyProp } from '@mikro-orm/core';
 import { InstantColumn, JsonColumn, References, TextColumn } from '../database/columns.js';
 import { Firm } from '../firms/firm.entity.js';
 
 /** A curve of the reference data. Rows are never changed: a correction is a new version. */
 @Entity({ tableName: 'curve' })
+@Index({
+  name: 'curve_firm',
+  expression: 'create index curve_firm on curve (firm_id) where firm_id is not null',
+})
 export class Curve {
   [PrimaryKeyProp]?: ['id', 'version'];
 

@@ -17,7 +17,7 @@ const MASTS = [
 
 /** Port and starboard of one stay, entered once. */
 export function PairStart({ vesselId, onDone }: { vesselId: string; onDone: () => void | Promise<void> }) {
-  const [kind, setKind] = useState(PAIRED[0].kind);
+  const [kind, setKind] = useState('cap-shroud');
   const [mast, setMast] = useState('main');
   const keyFor = useIdempotencyKey();
   const adding = useMutation({

@@ -31,13 +31,15 @@ export function LoadBasisTable({
     .map((item) => ({ ...item, label: labels.get(item.positionId) ?? '' }));
   if (rows.length === 0) return null;
   return (
-    <DataTable
-      caption="Where the loads of each place can come from"
-      showCaption
-      stackOnPhone
-      rows={rows}
-      columns={COLUMNS}
-      rowKey={({ positionId }) => positionId}
-    />
+    <>
+      <h2>Where the loads of each place can come from</h2>
+      <DataTable
+        caption="Where the loads of each place can come from"
+        stackOnPhone
+        rows={rows}
+        columns={COLUMNS}
+        rowKey={({ positionId }) => positionId}
+      />
+    </>
   );
 }

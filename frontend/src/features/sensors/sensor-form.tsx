@@ -136,7 +136,7 @@ export function SensorForm({
         searchable
         clearable
         choices={places}
-        hint="Only where nothing joins in between, such as the leg below a tackle. Geometry alone carries no load over."
+        hint="Only where nothing joins in between, such as the lashing below a stay. Geometry alone carries no load over."
       />
       {kind === 'ram-pressure' ? (
         <NumberField name="scaleFigure" label="Area of the piston" unit="mm²" />
