@@ -1,4 +1,5 @@
 import 'reflect-metadata';
+import { TableNotFoundException } from '@mikro-orm/core';
 import { Clock } from '../common/clock/clock.js';
 import { readOwnerEnv } from '../config/env.js';
 import { asOwner } from '../database/owner-command.js';
@@ -36,7 +37,13 @@ verify().then(
     process.exitCode = code;
   },
   (error: unknown) => {
-    console.error(error instanceof Error && error.name === 'EnvironmentError' ? error.message : error);
+    if (error instanceof TableNotFoundException) {
+      console.error(
+        'This database holds no ledgers yet, or is older than this command: npm start brings it up to date.',
+      );
+    } else {
+      console.error(error instanceof Error && error.name === 'EnvironmentError' ? error.message : error);
+    }
     process.exitCode = 2;
   },
 );
