@@ -14,6 +14,8 @@ import { LoadLog } from './load-log.entity.js';
 /** An upload that was not gone on with for so long is given up. */
 export const UPLOAD_EXPIRY_MS = 7 * 24 * 3_600_000;
 const SWEEP_EVERY_MS = 60_000;
+/** Clocks of file systems are not ours. */
+const OVERLAP_MS = 3_600_000;
 
 /** Takes over files whose last byte has arrived, and clears away those that never got so far. */
 @Injectable()
@@ -139,7 +141,9 @@ export class LogReceiver implements OnApplicationBootstrap {
         });
       }
     };
-    await each(await this.storage.completedSince(this.checkedUntilMs), async (key) => {
+    // A clock that was set back must not hide what arrived since.
+    const since = Math.min(this.checkedUntilMs, now - OVERLAP_MS);
+    await each(await this.storage.completedSince(since), async (key) => {
       const log = await this.logOf(key);
       if (log?.state === 'receiving') await this.takeOver(key);
     });
@@ -151,8 +155,7 @@ export class LogReceiver implements OnApplicationBootstrap {
       else if (log !== null && log.state !== 'receiving') await this.storage.discardHalf(key);
     });
     await each(await this.storage.halfReceivedBefore(now - UPLOAD_EXPIRY_MS), (key) => this.giveUp(key));
-    // An hour of overlap for clocks of file systems that are not ours.
-    if (failures === 0) this.checkedUntilMs = now - 3_600_000;
+    if (failures === 0) this.checkedUntilMs = now - OVERLAP_MS;
   }
 
   private async giveUp(key: StorageKey): Promise<void> {
