@@ -144,6 +144,8 @@ export async function startCluster({
     timezone: 'UTC',
     log_timezone: 'UTC',
     log_destination: 'stderr',
+    // Details of an error hold whole rows, addresses and password hashes among them.
+    log_error_verbosity: 'terse',
     max_connections: throwAway ? '200' : '60',
     // A database of this size gains little from more, and a small machine keeps room for counting.
     shared_buffers: '128MB',
