@@ -106,7 +106,7 @@ describe('a ledger that can be trusted', () => {
     await screenshot(page, 'ledger-1-details');
     expect(await accessibilityViolations(page)).toEqual([]);
     await page.getByRole('link', { name: 'Change the free length' }).click();
-    await page.getByLabel('Curve').selectOption('en-1993-1-11-105@1');
+    await page.getByLabel('Curve', { exact: true }).selectOption('en-1993-1-11-105@1');
     await page.getByLabel('Evidence').fill('Certificate 4711 names bar, not strand.');
     await page.getByRole('button', { name: 'Show what it changes' }).click();
     await page.getByText(/entries are reversed by further entries/).waitFor();
@@ -150,6 +150,22 @@ describe('a ledger that can be trusted', () => {
     await settled(page);
     await screenshot(page, 'ledger-7-position');
     expect(await accessibilityViolations(page)).toEqual([]);
+
+    // The same on a phone at night.
+    await page.setViewportSize({ width: 390, height: 844 });
+    await page.emulateMedia({ colorScheme: 'dark' });
+    for (const [name, address] of [
+      ['ledger-8-phone-details', `/parts/${partId}/details`],
+      ['ledger-9-phone-change', `/parts/${partId}/details/upper-terminal`],
+      ['ledger-10-phone-position', new URL(page.url()).pathname],
+    ]) {
+      await page.goto(address);
+      await page.getByRole('heading', { level: 1 }).waitFor();
+      await settled(page);
+      await screenshot(page, name);
+      const wide = await page.evaluate(() => document.documentElement.scrollWidth - window.innerWidth);
+      expect([name, wide > 0]).toEqual([name, false]);
+    }
     await history.getByRole('link').last().click();
     await page.getByText('removed on 10').waitFor();
     expect(visitor.complaints).toEqual([]);

@@ -41,6 +41,8 @@ describe('strand curves side by side', () => {
     expect(first.textContent).toContain('Curve A (this account)');
     expect(first.textContent).toContain('design curve');
     expect(second.textContent).toContain('mean of the tests');
+    // 0.05 / 0.4
+    expect(second.textContent).toMatch(/0\.1[23]$/);
   });
 
   it('says when there is nothing to set side by side', async () => {

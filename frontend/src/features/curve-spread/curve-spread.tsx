@@ -37,14 +37,15 @@ export function CurveSpread({ spread }: { spread: CurveSpreadDto }) {
       <DataTable
         caption="Strand curves side by side"
         rows={items}
-        columns={columns(format)}
+        columns={columns(format, items.find(({ isUsed }) => isUsed)?.allowance ?? 0)}
         rowKey={(row) => row.curveId}
       />
     </>
   );
 }
 
-function columns(format: Formatter): DataTableColumn<Row>[] {
+/** @param own allowance by the curve of the account; 0 where it is kept on none of these */
+function columns(format: Formatter, own: number): DataTableColumn<Row>[] {
   return [
     {
       key: 'curve',
@@ -69,6 +70,13 @@ function columns(format: Formatter): DataTableColumn<Row>[] {
       numeric: true,
       render: (row) => format.allowance(row.allowance),
       value: (row) => row.allowance,
+    },
+    {
+      key: 'beside',
+      title: 'Times this account',
+      numeric: true,
+      render: (row) => (own > 0 ? format.number(row.allowance / own, 2) : '–'),
+      value: (row) => (own > 0 ? row.allowance / own : null),
     },
   ];
 }

@@ -9,6 +9,7 @@ import { CurveSpread } from '../../features/curve-spread/curve-spread';
 import { curveSpreadQueries } from '../../features/curve-spread/curve-spread.queries';
 import { detailChoiceColumns } from '../../features/detail-choices/detail-choices.columns';
 import { detailChoiceQueries } from '../../features/detail-choices/detail-choices.queries';
+import styles from '../../features/life/part-life.module.css';
 import { rigQueries } from '../../features/rig/rig.queries';
 import { vesselQueries } from '../../features/vessels/vessels.queries';
 import { useFormat } from '../../lib/formatting/use-format';
@@ -65,7 +66,7 @@ export function PartDetailsPage() {
             )}
           </QueryView>
           {fitted.kindOfWire === 'strand' && (
-            <section aria-labelledby="strand-curves">
+            <section className={styles.section} aria-labelledby="strand-curves">
               <h2 id="strand-curves">Strand curves side by side</h2>
               <QueryView query={spread}>{(loaded) => <CurveSpread spread={loaded} />}</QueryView>
             </section>
