@@ -2,6 +2,8 @@ import type { Pool } from 'pg';
 
 /** How many of everything; the names are numbers and mean nothing. */
 export interface LargeFleet {
+  /** Tells the ids of several fleets in one database apart. */
+  series?: number;
   firmId: string;
   /** Whoever "uploaded" the logs. */
   userId: string;
@@ -13,8 +15,10 @@ export interface LargeFleet {
 }
 
 /** Ids that sort in the order they were made, like the application's own. */
-const id = (kind: number, number: string): string =>
-  `('0190f1ee-${kind.toString(16).padStart(4, '0')}-7000-8000-' || lpad(to_hex(${number}), 12, '0'))::uuid`;
+const idsOf =
+  (series: number) =>
+  (kind: number, number: string): string =>
+    `('0190f1ee-${(series * 16 + kind).toString(16).padStart(4, '0')}-7000-8000-' || lpad(to_hex(${number}), 12, '0'))::uuid`;
 
 /**
  * A fleet for measuring: vessels of one firm, each with parts in all states and some logs, written past row level
@@ -23,6 +27,7 @@ const id = (kind: number, number: string): string =>
  */
 export async function seedLargeFleet(admin: Pool, fleet: LargeFleet): Promise<void> {
   const { firmId, userId, vessels, partsPerVessel, logsPerVessel, todayOn } = fleet;
+  const id = idsOf(fleet.series ?? 0);
   const parts = vessels * partsPerVessel;
   const stamps = `$1::date, $1::date`;
   const run = (sql: string, values: unknown[] = []) => admin.query(sql, [todayOn, ...values]);

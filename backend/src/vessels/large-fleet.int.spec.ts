@@ -3,24 +3,32 @@ import { TestApp, type Agent } from '../testing/test-app.js';
 
 const VESSELS = 2000;
 const PARTS = 20;
-/** On a quiet machine; of several requests the fastest counts, so that busy neighbours do not decide. */
-const WITHIN_MS = 200;
+/** A fleet of two pages, to hold the large one against: a page that reads every vessel would cost twenty times as much. */
+const FEW_VESSELS = 100;
+const TIMES_THE_SMALL_FLEET = 8;
 
 let app: TestApp;
 let agent: Agent;
+let agentOfFew: Agent;
 
-beforeAll(async () => {
-  app = await TestApp.create();
+async function memberWithFleet(vessels: number): Promise<Agent> {
   const rigger = await app.make.member('rigger');
   await seedLargeFleet(app.database.admin, {
     firmId: rigger.firmId,
     userId: rigger.id,
-    vessels: VESSELS,
+    series: vessels,
+    vessels,
     partsPerVessel: PARTS,
     logsPerVessel: 3,
     todayOn: '2027-07-01',
   });
-  agent = await app.signIn(rigger);
+  return app.signIn(rigger);
+}
+
+beforeAll(async () => {
+  app = await TestApp.create();
+  agentOfFew = await memberWithFleet(FEW_VESSELS);
+  agent = await memberWithFleet(VESSELS);
 }, 60_000);
 afterAll(() => app?.close());
 
@@ -70,22 +78,27 @@ describe('a fleet of thousands', () => {
     const expected = await countedFromParts();
     for (const { id, counts } of items) expect(counts).toMatchObject(expected.get(id) ?? {});
     const overdue = await everyPage('sort=name&filter=overdue');
-    const shouldBe = [...expected.values()].filter((counts) => counts.overdue > 0).length;
-    expect(overdue).toHaveLength(shouldBe);
+    const shouldBe = items.filter(({ id }) => (expected.get(id)?.overdue ?? 0) > 0);
+    expect(overdue).toHaveLength(shouldBe.length);
     const names = overdue.map(({ name }) => name);
     expect(names).toEqual([...names].sort());
   }, 60_000);
 
   it.each(['sort=due', 'sort=name', 'sort=last-log', 'filter=overdue', 'filter=waiting', 'q=port+3'])(
-    'answers a page of %s quickly',
+    'answers a page of %s without reading the whole fleet',
     async (query) => {
-      let fastestMs = Infinity;
-      for (let round = 0; round < 8; round += 1) {
+      // The fastest of several requests counts, so that busy neighbours do not decide.
+      const fastestMs = { few: Infinity, many: Infinity };
+      const time = async (who: 'few' | 'many', by: Agent) => {
         const startedMs = performance.now();
-        await agent.get(`/api/vessels?${query}`).expect(200);
-        fastestMs = Math.min(fastestMs, performance.now() - startedMs);
+        await by.get(`/api/vessels?${query}`).expect(200);
+        fastestMs[who] = Math.min(fastestMs[who], performance.now() - startedMs);
+      };
+      for (let round = 0; round < 8; round += 1) {
+        await time('few', agentOfFew);
+        await time('many', agent);
       }
-      expect(fastestMs).toBeLessThan(WITHIN_MS);
+      expect(fastestMs.many / fastestMs.few).toBeLessThan(TIMES_THE_SMALL_FLEET);
     },
   );
 });
