@@ -232,13 +232,11 @@ describe('everything of one vessel', () => {
           .set({ ...TUS, 'Upload-Offset': '0', 'Content-Type': 'application/offset+octet-stream' })
           .send(BYTES),
       (id: string) =>
-        agent
-          .post('/api/uploads')
-          .set({
-            ...TUS,
-            'Upload-Length': '10',
-            'Upload-Metadata': `loadLogId ${Buffer.from(id).toString('base64')}`,
-          }),
+        agent.post('/api/uploads').set({
+          ...TUS,
+          'Upload-Length': '10',
+          'Upload-Metadata': `loadLogId ${Buffer.from(id).toString('base64')}`,
+        }),
     ]) {
       const replies = [];
       for (const id of [newId(), foreign.ids.loadLogId, lapsed.ids.loadLogId]) {

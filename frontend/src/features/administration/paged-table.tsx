@@ -37,7 +37,13 @@ export function PagedTable<Item extends { id: string }, Key extends readonly unk
         }
         return (
           <>
-            <DataTable caption={caption} stackOnPhone rows={rows} columns={columns} rowKey={(row) => row.id} />
+            <DataTable
+              caption={caption}
+              stackOnPhone
+              rows={rows}
+              columns={columns}
+              rowKey={(row) => row.id}
+            />
             {query.hasNextPage ? (
               <PlainButton disabled={query.isFetchingNextPage} onClick={() => void query.fetchNextPage()}>
                 {query.isFetchingNextPage ? 'Fetching more…' : 'Show more'}
