@@ -2,6 +2,7 @@ import type { UseQueryResult } from '@tanstack/react-query';
 import type { ReactNode } from 'react';
 import { ErrorState } from './error-state';
 import { LoadingState } from './loading-state';
+import { useRetryFailed } from './use-retry-failed';
 
 /**
  * The three states of a query. A failed refresh keeps what was shown and says so above it: a stale figure with a
@@ -16,21 +17,17 @@ export function QueryView<Data>({
   loadingLabel?: string;
   children: (data: Data) => ReactNode;
 }) {
+  const retryFailed = useRetryFailed();
   if (query.data !== undefined) {
     return (
       <>
         {query.isError ? (
-          <ErrorState
-            title="Not up to date"
-            error={query.error}
-            onRetry={() => void query.refetch()}
-            retryLabel="Refresh"
-          />
+          <ErrorState title="Not up to date" error={query.error} onRetry={retryFailed} retryLabel="Refresh" />
         ) : null}
         {children(query.data)}
       </>
     );
   }
-  if (query.isError) return <ErrorState error={query.error} onRetry={() => void query.refetch()} />;
+  if (query.isError) return <ErrorState error={query.error} onRetry={retryFailed} />;
   return <LoadingState label={loadingLabel} />;
 }

@@ -4,6 +4,7 @@ import { Link } from 'react-router-dom';
 import { paths } from '../../app/paths';
 import { ErrorState } from '../../components/feedback/error-state';
 import { LoadingState } from '../../components/feedback/loading-state';
+import { useRetryFailed } from '../../components/feedback/use-retry-failed';
 import { PlainButton } from '../../components/plain-button/plain-button';
 import { CsvDownload } from '../../components/tables/csv-download';
 import { DataTable, type DataTableColumn } from '../../components/tables/data-table';
@@ -17,9 +18,10 @@ import { ledgerQueries } from './ledger.queries';
 export function LedgerEntries({ partId, zone }: { partId: string; zone: string }) {
   const format = useFormat();
   const query = useInfiniteQuery(ledgerQueries.ofPart(partId));
+  const retryFailed = useRetryFailed();
   if (query.data === undefined) {
     return query.isError ? (
-      <ErrorState error={query.error} onRetry={() => void query.refetch()} />
+      <ErrorState error={query.error} onRetry={retryFailed} />
     ) : (
       <LoadingState label="Loading the ledger" />
     );

@@ -6,6 +6,7 @@ import { paths } from '../../app/paths';
 import { EmptyState } from '../../components/feedback/empty-state';
 import { ErrorState } from '../../components/feedback/error-state';
 import { LoadingState } from '../../components/feedback/loading-state';
+import { useRetryFailed } from '../../components/feedback/use-retry-failed';
 import { ButtonLink, PlainButton } from '../../components/plain-button/plain-button';
 import { DataTable, type DataTableColumn } from '../../components/tables/data-table';
 import type { Formatter } from '../../lib/formatting/format';
@@ -23,6 +24,7 @@ interface LoadLogListProps {
 export function LoadLogList({ vesselId, zone, mayUpload }: LoadLogListProps) {
   const format = useFormat();
   const query = useInfiniteQuery(loadLogQueries.ofVessel(vesselId));
+  const retryFailed = useRetryFailed();
   const add = mayUpload ? (
     <ButtonLink weight="primary" to={paths.addLoadLog.to(vesselId)}>
       <UploadOutlined aria-hidden />
@@ -31,7 +33,7 @@ export function LoadLogList({ vesselId, zone, mayUpload }: LoadLogListProps) {
   ) : null;
   if (query.data === undefined) {
     return query.isError ? (
-      <ErrorState error={query.error} onRetry={() => void query.refetch()} />
+      <ErrorState error={query.error} onRetry={retryFailed} />
     ) : (
       <LoadingState label="Loading the load logs" />
     );

@@ -4,6 +4,7 @@ import { Link } from 'react-router-dom';
 import { paths } from '../../app/paths';
 import { ErrorState } from '../../components/feedback/error-state';
 import { LoadingState } from '../../components/feedback/loading-state';
+import { useRetryFailed } from '../../components/feedback/use-retry-failed';
 import { DueWord } from '../../components/part-mark/due-word';
 import { PartMark } from '../../components/part-mark/part-mark';
 import { clock } from '../../lib/clock';
@@ -19,8 +20,9 @@ export function WorkDue({ format }: { format: Formatter }) {
   const [overdue, due, waiting] = useQueries({
     queries: [vesselQueries.work('overdue'), vesselQueries.work('due'), vesselQueries.work('waiting')],
   });
+  const retryFailed = useRetryFailed();
   const failed = [overdue, due, waiting].find((query) => query.isError);
-  if (failed) return <ErrorState error={failed.error} onRetry={() => void failed.refetch()} />;
+  if (failed) return <ErrorState error={failed.error} onRetry={retryFailed} />;
   if (!overdue.data || !due.data || !waiting.data) return <LoadingState label="Looking for work due" />;
 
   // A vessel whose first part is overdue may have another one due: it is named once, by the part that governs.
