@@ -37,5 +37,9 @@ export const REGISTRY: { values: string[]; load: () => Promise<BenchRow> }[] = [
     values: ['apiP95Ratio', 'loopDelayP99Ms'],
     load: async () => (await import('./api.row.js')).apiRow,
   },
+  {
+    values: ['initialKB', 'largestRouteKB'],
+    load: async () => (await import('./web-size.row.js')).webSizeRow,
+  },
   { values: ['compareMs'], load: async () => (await import('./compare.row.js')).compareRow },
 ];
