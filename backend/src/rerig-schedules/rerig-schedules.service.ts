@@ -86,6 +86,7 @@ export class RerigSchedulesService {
   /** The yard's steps: proposed to the owner, booked, done, or back to a draft. */
   async move(me: Principal, vesselId: string, input: MoveScheduleInput): Promise<RerigScheduleDto> {
     const { vessel, schedule } = await this.openFor(me, vesselId, input.version);
+    if (input.state === 'proposed') await this.refuseOldDates(schedule);
     await this.go(me, schedule, input.state, input.state === 'draft' ? schedule.question : null);
     return this.toDto(me, vessel, schedule);
   }
@@ -102,6 +103,7 @@ export class RerigSchedulesService {
       await this.save(me, schedule, 'rerig-schedule.asked', {});
     } else {
       await this.refuseLatePlan(schedule);
+      await this.refuseOldDates(schedule);
       await this.go(me, schedule, 'accepted', null);
     }
     return this.toDto(me, vessel, schedule);
@@ -130,6 +132,28 @@ export class RerigSchedulesService {
         'This plan runs past a date and cannot be accepted as it stands. Ask the rigger what can be done sooner.',
       );
     }
+  }
+
+  /** A plan made before a log, a part or the planned sailing moved a date may run past the new one. */
+  private async refuseOldDates(schedule: RerigSchedule): Promise<void> {
+    if (await this.datesMoved(schedule)) {
+      throw new StateConflictError(
+        'Dates of parts were worked out again after this plan was made. It has to be planned anew first.',
+      );
+    }
+  }
+
+  private async datesMoved(schedule: RerigSchedule): Promise<boolean> {
+    if (schedule.plan === null || schedule.state === 'done') return false;
+    const [{ moved }] = await this.em.execute<[{ moved: boolean }]>(
+      `select exists (
+         select 1 from part_standing s
+           join fitted_part f on f.id = s.fitted_part_id and f.removed_on is null
+           join rerig_plan p on p.id = ? and s.updated_at > p.created_at
+          where s.vessel_id = ?) as moved`,
+      [schedule.plan, schedule.vessel],
+    );
+    return moved;
   }
 
   private async go(
@@ -284,6 +308,7 @@ export class RerigSchedulesService {
       planning,
       plan,
       draftHidden: hidden && schedule.plan !== null,
+      datesMoved: schedule !== null && !hidden && (await this.datesMoved(schedule)),
     };
   }
 

@@ -116,6 +116,7 @@ export function sampleSchedule(overrides: Partial<RerigScheduleDto> = {}): Rerig
     planning: null,
     plan: samplePlan(),
     draftHidden: false,
+    datesMoved: false,
     ...overrides,
   };
 }

@@ -167,6 +167,30 @@ describe('the re-rig schedule of a vessel', () => {
     );
   });
 
+  it('is not proposed once a date was worked out again, until it is planned anew', async () => {
+    const rig = await riggedVessel('2024-05-10');
+    const first = await planned(rig, {});
+    expect(first.datesMoved).toBe(false);
+    app.clock.advance({ minutes: 1 });
+    await rig.owner
+      .put(`/api/vessels/${rig.vessel.id}/usage-plan`)
+      .send({ sailingHoursPerYear: 700 })
+      .expect(200);
+    const older = await scheduleOf(rig);
+    expect(older.datesMoved).toBe(true);
+    const propose = (version: number | null, status: number) =>
+      rig.rigger
+        .post(`${pathOf(rig)}/state`)
+        .send({ version, state: 'proposed' })
+        .expect(status);
+    const refused = await propose(older.version, 409);
+    expect(refused.body).toMatchObject({ code: 'state-conflict' });
+    expect(refused.body.message).toContain('planned anew');
+    const anew = await planned(rig, { version: older.version });
+    expect(anew.datesMoved).toBe(false);
+    await propose(anew.version, 200);
+  });
+
   it('keeps clear of absences, says when no window is left, and goes on standing when planning fails', async () => {
     const rig = await riggedVessel('2024-05-10');
     const away = (fromOn: string, untilOn: string) => ({ fromOn, untilOn, reason: 'charter' });

@@ -223,5 +223,7 @@ export const rerigScheduleSchema = z.object({
   plan: rerigPlanSchema.nullable(),
   /** True where there is a draft that the person may not see yet. */
   draftHidden: z.boolean(),
+  /** True where the dates of a part were worked out again after the plan was made: it may no longer keep them. */
+  datesMoved: z.boolean(),
 });
 export type RerigScheduleDto = z.infer<typeof rerigScheduleSchema>;

@@ -77,12 +77,18 @@ export function RerigScheduleView({ vessel, schedule }: { vessel: VesselDto; sch
             Asked for by {shown.askedByName}.
           </p>
           {schedule.question !== null ? <Attention>The owner asks: {schedule.question}</Attention> : null}
+          {schedule.datesMoved ? (
+            <Attention>
+              Dates of parts were worked out again after this plan was made, so it may no longer keep them.{' '}
+              {mayPlan ? 'Plan anew to see what changes.' : `${schedule.firmName} will plan it anew.`}
+            </Attention>
+          ) : null}
           <LateWork schedule={schedule} zone={vessel.zone} />
           <div className={styles.steps}>
             {mayPlan && next && version !== undefined ? (
               <PlainButton
                 weight="primary"
-                disabled={busy}
+                disabled={busy || (next.state === 'proposed' && schedule.datesMoved)}
                 onClick={() => step.mutate({ step: 'state', input: { version, state: next.state } })}
               >
                 {next.label}

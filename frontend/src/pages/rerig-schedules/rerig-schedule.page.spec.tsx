@@ -142,6 +142,16 @@ describe('the re-rig schedule tab', () => {
     expect(late.textContent).toContain('It cannot be accepted');
   });
 
+  it('says when dates moved after the plan was made, and does not let it be proposed', async () => {
+    schedules(sampleSchedule({ datesMoved: true }));
+    renderApp(PATH);
+    await screen.findByText(/worked out again after this plan was made/);
+    expect(screen.getByRole<HTMLButtonElement>('button', { name: 'Propose to the owner' }).disabled).toBe(
+      true,
+    );
+    expect(screen.getByRole<HTMLButtonElement>('button', { name: 'Plan anew' }).disabled).toBe(false);
+  });
+
   it('is read by the owner without a button that plans', async () => {
     schedules(sampleSchedule({ state: 'proposed' }), 'owner');
     renderApp(PATH);
