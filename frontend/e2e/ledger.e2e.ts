@@ -1,5 +1,5 @@
 import type { Browser } from 'playwright-core';
-import { afterAll, afterEach, beforeAll, describe, expect, inject, it } from 'vitest';
+import { afterAll, afterEach, beforeAll, describe, expect, inject, it, vi } from 'vitest';
 import {
   accessibilityViolations,
   demoSignIns,
@@ -67,12 +67,14 @@ async function vesselWithPostedLog(
     headers: { ...tus, 'Upload-Offset': '0', 'Content-Type': 'application/offset+octet-stream' },
     data: bytes,
   });
-  let counted = log;
-  while (counted.state !== 'counted') {
-    if (counted.state === 'failed') throw new Error('The log of this journey could not be counted.');
-    await visitor.page.waitForTimeout(200);
-    counted = (await (await request.get(`/api/load-logs/${log.id}`)).json()) as typeof log;
-  }
+  const counted = await vi.waitFor(
+    async () => {
+      const now = (await (await request.get(`/api/load-logs/${log.id}`)).json()) as typeof log;
+      if (now.state !== 'counted') throw new Error(`The log of this journey is still ${now.state}.`);
+      return now;
+    },
+    { timeout: 60_000, interval: 200 },
+  );
   await send(`/load-logs/${log.id}/post`, { version: counted.version });
   return { vesselId: vessel.id, partId: part.id, logId: log.id };
 }
