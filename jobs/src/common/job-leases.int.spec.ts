@@ -34,6 +34,8 @@ let logged: LoggedVessel;
 
 beforeAll(async () => {
   app = await createTestService();
+  // The service's own sweep, every few seconds, would claim the very jobs these tests leave lying: they sweep themselves.
+  await app.nest.get(JobSweep).beforeApplicationShutdown();
   logged = await createLoggedVessel(app);
 });
 afterAll(() => app?.close());
