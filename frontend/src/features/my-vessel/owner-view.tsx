@@ -1,4 +1,4 @@
-import type { PositionDto } from '@stayledger/shared/contracts/rig';
+import type { PartStandingDto, PositionDto } from '@stayledger/shared/contracts/rig';
 import type { VesselDto } from '@stayledger/shared/contracts/vessels';
 import type { ReactNode } from 'react';
 import { Link } from 'react-router-dom';
@@ -122,6 +122,29 @@ function NextStep({ vessel, hasPlan, part }: { vessel: VesselDto; hasPlan: boole
   return null;
 }
 
+/** One part of a list: its mark, its name, and what the list says of it. An empty position has no line. */
+function PartLine({
+  position: { part, label },
+  children,
+}: {
+  position: PositionDto;
+  children: (standing: PartStandingDto) => ReactNode;
+}) {
+  if (part === null) return null;
+  return (
+    <li>
+      <PartMark
+        standing={part.standing}
+        kindOfWire={part.kindOfWire}
+        size={24}
+        alternative={plainMark(part.standing)}
+      />
+      <Link to={paths.part.to(part.id)}>{label}</Link>
+      {children(part.standing)}
+    </li>
+  );
+}
+
 function LaterDates({ positions, zone }: { positions: PositionDto[]; zone: string }) {
   const format = useFormat();
   if (positions.length === 0) return null;
@@ -130,20 +153,11 @@ function LaterDates({ positions, zone }: { positions: PositionDto[]; zone: strin
     <section aria-labelledby="later">
       <h2 id="later">Later</h2>
       <ul className={styles.list}>
-        {positions.map((position) =>
-          position.part ? (
-            <li key={position.id}>
-              <PartMark
-                standing={position.part.standing}
-                kindOfWire={position.part.kindOfWire}
-                size={24}
-                alternative={plainMark(position.part.standing)}
-              />
-              <Link to={paths.part.to(position.part.id)}>{position.label}</Link>
-              <span>{format.dueDay(position.part.standing.replaceByOn, todayOn, zone)}</span>
-            </li>
-          ) : null,
-        )}
+        {positions.map((position) => (
+          <PartLine key={position.id} position={position}>
+            {({ replaceByOn }) => <span>{format.dueDay(replaceByOn, todayOn, zone)}</span>}
+          </PartLine>
+        ))}
       </ul>
     </section>
   );
@@ -163,20 +177,11 @@ function NotAssessed({ positions }: { positions: PositionDto[] }) {
         <>
           <p>Nothing is known about the loads of these parts. Their age and inspections decide:</p>
           <ul className={styles.list}>
-            {unknown.map((position) =>
-              position.part ? (
-                <li key={position.id}>
-                  <PartMark
-                    standing={position.part.standing}
-                    kindOfWire={position.part.kindOfWire}
-                    size={24}
-                    alternative={plainMark(position.part.standing)}
-                  />
-                  <Link to={paths.part.to(position.part.id)}>{position.label}</Link>
-                  <span className="soft">{position.part.standing.notAssessedReason}</span>
-                </li>
-              ) : null,
-            )}
+            {unknown.map((position) => (
+              <PartLine key={position.id} position={position}>
+                {({ notAssessedReason }) => <span className="soft">{notAssessedReason}</span>}
+              </PartLine>
+            ))}
           </ul>
         </>
       ) : null}
